@@ -1,0 +1,49 @@
+/**
+ * Every limit of the engine, in one place. Beyond them the engine refuses with `EngineError`, naming the limit.
+ * They are settings of ours, chosen so that the longest allowed piece still opens in a browser; none is a rule of the trade.
+ */
+export const LIMITS = {
+  /** characters of one rhythm text */
+  rhythmTextLength: 1_000_000,
+  /** values of one rhythm, repeats written out */
+  rhythmValues: 120_000,
+  /** repeats in `[ … ]xN` */
+  repeatCount: 10_000,
+  /** numerator and denominator of one typed length */
+  fractionTerm: 1_000_000_000,
+  /** characters of one typed fraction */
+  fractionText: 64,
+  /** greatest and least factor of an augmentation (its inverse) */
+  factor: 1_000,
+  /** statements of one section */
+  statements: 256,
+  /** sections of a study */
+  sections: 200,
+  /** steps of one chain of transformations */
+  steps: 32,
+  instruments: 64,
+  players: 64,
+  subjects: 64,
+  /** lines of one free section, or under a section */
+  lines: 64,
+  /** values of a whole study, all statements and lines together */
+  studyValues: 400_000,
+  /** measures of one line */
+  measures: 60_000,
+  /** beats of a metre, its groups added */
+  metreBeats: 64,
+  /** greatest beat unit of a metre (a 64th) */
+  metreUnit: 64,
+  /** the shortest symbol that is written */
+  shortestSymbol: 256,
+  /** sound numbers of one instrument */
+  sounds: 12,
+  /** length of a title or a name */
+  name: 200,
+  /** length of an id */
+  id: 64,
+  /** pulses of a Euclidean rhythm, and of a resultant's generators */
+  pulses: 1_024,
+  /** lengths of a ladder or an alignment */
+  lengths: 1_024,
+} as const;

@@ -1,0 +1,6 @@
+/** @type {import('next').NextConfig} */
+export default {
+  reactStrictMode: true,
+  poweredByHeader: false,
+  devIndicators: false,
+};
