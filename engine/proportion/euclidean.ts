@@ -14,24 +14,18 @@ export function euclidean(attacks: number, pulses: number): number[] {
   readPulses(attacks, 'The number of attacks');
   if (attacks > pulses) throw new EngineError('invalid_argument', `${attacks} attacks do not fit into ${pulses} pulses.`);
   if (attacks === pulses - 1) return [2, ...Array<number>(attacks - 1).fill(1)];
-  // Each string is its gaps: an attack with the rests that follow it is one gap.
   let heads: number[][] = Array.from({ length: attacks }, () => [1]);
-  let rests = pulses - attacks;
-  while (rests > 0) {
-    const given = Math.min(rests, attacks);
-    if (given < attacks) break;
-    heads = heads.map(([gap = 0]) => [gap + 1]);
-    rests -= given;
-  }
-  let tails = heads.splice(rests);
-  heads = heads.map(([gap = 0]) => [gap + 1]);
-  if (heads.length === 0) [heads, tails] = [tails, []];
+  let tails: number[][] = Array.from({ length: pulses - attacks }, () => [0]);
   while (tails.length > 1) {
     const pairs = Math.min(heads.length, tails.length);
     const joined = heads.slice(0, pairs).map((head, index) => [...head, ...tails[index]!]);
-    const left = heads.length > pairs ? heads.slice(pairs) : tails.slice(pairs);
+    tails = heads.length > pairs ? heads.slice(pairs) : tails.slice(pairs);
     heads = joined;
-    tails = left;
   }
-  return [...heads, ...tails].flat();
+  const gaps: number[] = [];
+  for (const pulse of [...heads, ...tails].flat()) {
+    if (pulse === 1) gaps.push(1);
+    else gaps[gaps.length - 1]! += 1;
+  }
+  return gaps;
 }

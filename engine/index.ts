@@ -1,0 +1,42 @@
+export { EngineError, RhythmTextError, type EngineErrorCode } from './errors';
+export { LIMITS } from './limits';
+export { Fraction, formatFraction, toFraction, toFactor, type Exact } from './exact/fraction';
+
+export type { Reading, RetrogradeBy, Rhythm, Value } from './rhythm/types';
+export { parseRhythm } from './rhythm/parse';
+export { formatRhythm } from './rhythm/format';
+export { attacks, measuresOf, totalLength } from './rhythm/measure';
+export { parseMetre, metreOfLength, type Metre, type MetreKind, type ParsedMetre } from './rhythm/metre';
+export { parseTempo, secondsOf, type Tempo } from './rhythm/tempo';
+
+export { addToEach, augment, diminish } from './transform/augment';
+export { retrograde } from './transform/retrograde';
+export { rotate, type RotateBy } from './transform/rotate';
+export { applySteps, type Step } from './transform/steps';
+
+export { ladder, type Ladder } from './proportion/ladder';
+export { alignment } from './proportion/alignment';
+export { tempoFor } from './proportion/tempo-for';
+export { resultant } from './proportion/resultant';
+export { euclidean } from './proportion/euclidean';
+
+export {
+  parseStudy,
+  studySchema,
+  type Entries,
+  type Family,
+  type FreeSection,
+  type Instrument,
+  type MirrorSection,
+  type Process,
+  type ProcessSection,
+  type ProportionProcess,
+  type Role,
+  type Section,
+  type Study,
+  type StudyInput,
+} from './study/schema';
+export type { BuiltSection, BuiltStudy, Line, Palindrome, PalindromeSense, Statement } from './study/types';
+
+export type { BeamMark, Base, MetrePlan, NotationMeasure, NotationSymbol, TupletMark } from './notation/types';
+export type { PlayEvent } from './views/types';
