@@ -36,7 +36,36 @@ export {
   type Study,
   type StudyInput,
 } from './study/schema';
+export { buildStudy } from './study/build';
+export { statementsOf, type LineSource } from './study/line';
+export { proportionFactors } from './process/proportion';
 export type { BuiltSection, BuiltStudy, Line, Palindrome, PalindromeSense, Statement } from './study/types';
 
 export type { BeamMark, Base, MetrePlan, NotationMeasure, NotationSymbol, TupletMark } from './notation/types';
 export type { PlayEvent } from './views/types';
+export { clockOf, formatClock, spokenClock, type Clock, type ClockSpan } from './views/clock';
+export {
+  measureAt,
+  metreOf,
+  metrePlan,
+  placeWords,
+  planMeasures,
+  tempoOf,
+  type MetreChange,
+  type PlannedMeasure,
+} from './views/measures';
+export { playEvents } from './views/play-events';
+export { threadsOf, type Thread, type ThreadReading, type ThreadRow, type ThreadTick, type Threads } from './views/threads';
+
+export {
+  describeContext,
+  describeSection,
+  describeStatement,
+  describeStudy,
+  palindromeWords,
+  tempoWords,
+  type DescribeContext,
+} from './describe/describe';
+export { readingWords, sectionSentence, type SentenceControl, type SentencePart } from './describe/sentence';
+export { mirrorWords, sectionRemarks, sectionSum, studyMetres, studySum, sumWords, type Remark, type Sum } from './describe/sums';
+export { inSentence, measureNumber, measureWords, valueName, type DescribeOptions, type ValueNames } from './describe/words';

@@ -1,0 +1,118 @@
+import { type Fraction, formatFraction, sum, toFraction } from '../exact/fraction';
+import { proportionFactors } from '../process/proportion';
+import { ladder } from '../proportion/ladder';
+import { parseMetre } from '../rhythm/metre';
+import type { Section, Study } from '../study/schema';
+import type { BuiltStudy, Statement } from '../study/types';
+import { metreOf } from '../views/measures';
+import { listWords, measureNumber, measureWords } from './words';
+
+/** A total with the sum that makes it: `4 + 5 + 6 + 8 = 23 measures`. */
+export type Sum = {
+  /** `4 + 5 + 6 + 8`, or empty where there is nothing to add */
+  readonly terms: string;
+  /** `23 measures` */
+  readonly total: string;
+};
+
+/** Whether spans follow one another without gap or overlap. */
+function isChain(spans: readonly { start: Fraction; length: Fraction }[]): boolean {
+  return spans.every((span, index) => index === 0 || spans[index - 1]!.start.add(spans[index - 1]!.length).equals(span.start));
+}
+
+const sumOf = (lengths: readonly Fraction[], total: Fraction, metre: string): Sum => ({
+  terms: lengths.length < 2 ? '' : lengths.map((length) => measureNumber(length, metre)).join(' + '),
+  total: measureWords(total, metre),
+});
+
+/** The length of a section with its sum, where its statements follow one another. */
+export function sectionSum(study: Study, built: BuiltStudy, section: Section): Sum {
+  const metre = metreOf(study, section);
+  const { length } = built.sections.find(({ id }) => id === section.id)!;
+  const statements = built.statements.filter((s) => s.section === section.id && s.subject !== null);
+  return sumOf(isChain(statements) ? statements.map((s) => s.length) : [], length, metre);
+}
+
+/** The length of the study with its sum over the sections, each in measures of its own metre. */
+export function studySum(study: Study, built: BuiltStudy): Sum {
+  const counts = study.sections.map((section, index) => built.sections[index]!.length.div(parseMetre(metreOf(study, section)).length));
+  const total = sum(counts);
+  return {
+    terms: counts.length < 2 ? '' : counts.map((count) => count.toFraction(true)).join(' + '),
+    total: `${total.toFraction(true)} ${total.compare(1) > 0 ? 'measures' : 'measure'}`,
+  };
+}
+
+/** The metres of a study in order of first use. */
+export const studyMetres = (study: Study): string[] => [...new Set(study.sections.map((section) => metreOf(study, section)))];
+
+export const sumWords = ({ terms, total }: Sum): string => (terms === '' ? total : `${terms} = ${total}`);
+
+/** What does not hold in a section, in words, and the factors that would mend it. */
+export type Remark = {
+  readonly code: 'unequal-steps' | 'ends-inside';
+  readonly text: string;
+  /** the statement at fault, by number, where there is one */
+  readonly statement?: number;
+  /** what would mend it: a label, and the factors (or ratio and count) to put in place */
+  readonly mend?: { readonly label: string; readonly factors: readonly string[]; readonly ratio?: string };
+};
+
+function stepsRemark(factors: readonly Fraction[]): Remark | null {
+  if (factors.length < 3) return null;
+  const { steps, equalSteps } = ladder(factors);
+  const first = steps[0]!;
+  if (equalSteps || first.equals(1)) return null;
+  const shown = steps.map(formatFraction);
+  const power = factors.map((_, index) => formatFraction(first.pow(index)!));
+  return {
+    code: 'unequal-steps',
+    text: `Each statement is ${shown.slice(0, -1).join(', ')}, then ${shown.at(-1)} of the one before it: the steps are not equal.`,
+    mend: { label: 'Make every step equal', factors: power.map((factor) => formatFraction(toFraction(factor).mul(factors[0]!))), ratio: formatFraction(first) },
+  };
+}
+
+/** The factor nearest to `factor` at which a statement of `once` lasts whole measures, at least one. */
+function wholeFactor(factor: Fraction, once: Fraction, measure: Fraction): Fraction {
+  const rounded = once.mul(factor).div(measure).round();
+  return (rounded.compare(1) < 0 ? rounded.add(1) : rounded).mul(measure).div(once);
+}
+
+function endRemark(study: Study, section: Section, statements: readonly Statement[], sectionStart: Fraction, factors: readonly Fraction[]): Remark | null {
+  const metre = metreOf(study, section);
+  const measure = parseMetre(metre).length;
+  for (const [index, statement] of statements.entries()) {
+    const end = statement.start.sub(sectionStart).add(statement.length).div(measure);
+    const over = end.sub(end.floor());
+    if (over.n === 0n) continue;
+    const text = `Statement ${index + 1} ends ${formatFraction(over)} into a measure.`;
+    const factor = factors[index];
+    const startsWhole = statement.start.sub(sectionStart).div(measure).d === 1n;
+    if (factor === undefined || !startsWhole) return { code: 'ends-inside', text, statement: index };
+    const mended = wholeFactor(factor, statement.length.div(factor), measure);
+    const next = factors.map((one, n) => formatFraction(n === index ? mended : one));
+    return { code: 'ends-inside', text, statement: index, mend: { label: `Make it ${measureWords(statement.length.div(factor).mul(mended), metre)}, at ${formatFraction(mended)}`, factors: next } };
+  }
+  return null;
+}
+
+/** What a composer would want to be told about a section of one statement after another. */
+export function sectionRemarks(study: Study, built: BuiltStudy, section: Section): Remark[] {
+  if (section.kind !== 'process' || section.process.kind !== 'proportion') return [];
+  const factors = proportionFactors(section.process);
+  const statements = built.statements.filter((s) => s.section === section.id && s.subject !== null);
+  const isSuccessive = (section.process.entries ?? 'successive') === 'successive';
+  const start = built.sections.find(({ id }) => id === section.id)!.start;
+  const remarks = [isSuccessive ? stepsRemark(factors) : null, isSuccessive ? endRemark(study, section, statements, start, factors) : null];
+  return remarks.filter((remark) => remark !== null);
+}
+
+/** Which sections mirror which, in words: “Filling and Emptying, Sluice and Sluice reversed mirror about Pound”. */
+export function mirrorWords(study: Study, built: BuiltStudy): string | null {
+  const { sections } = study;
+  const pairs = Math.floor(sections.length / 2);
+  if (!built.palindrome.form.holds || pairs === 0) return null;
+  const middle = sections.length % 2 === 1 ? sections[pairs]! : null;
+  const first = sections.slice(0, pairs).map(({ name }, index) => `${name} with ${sections[sections.length - 1 - index]!.name}`);
+  return `${listWords(first)} ${pairs === 1 ? 'mirrors' : 'mirror'} about ${middle ? middle.name : 'the middle'}`;
+}

@@ -1,0 +1,110 @@
+import { EngineError } from '../errors';
+import { Fraction, ZERO, formatFraction, toFraction } from '../exact/fraction';
+import { LIMITS } from '../limits';
+import { type Metre, metreOfLength, parseMetre } from '../rhythm/metre';
+import type { MirrorSection, Section, Study } from '../study/schema';
+import type { BuiltStudy } from '../study/types';
+
+/** What decides measures and time: the sections and the whole length. */
+export type Extent = Pick<BuiltStudy, 'sections' | 'totalLength'>;
+
+function inherited<K extends 'metre' | 'tempo'>(study: Study, section: Section, field: K): NonNullable<Section[K]> | undefined {
+  const seen = new Set<string>();
+  let one: Section | undefined = section;
+  while (one !== undefined && one[field] === undefined && one.kind === 'mirror' && !seen.has(one.id)) {
+    seen.add(one.id);
+    const { of }: MirrorSection = one;
+    one = study.sections.find(({ id }) => id === of);
+  }
+  return one?.[field] as NonNullable<Section[K]> | undefined;
+}
+
+/** The metre of a section: its own, or that of what it mirrors, or the study's. */
+export const metreOf = (study: Study, section: Section): Metre => inherited(study, section, 'metre') ?? study.metre;
+
+/** The tempo of a section: its own, or that of what it mirrors, or the study's. */
+export const tempoOf = (study: Study, section: Section): Study['tempo'] => inherited(study, section, 'tempo') ?? study.tempo;
+
+export type MetreChange = { readonly at: Fraction; readonly metre: Metre };
+
+/**
+ * The metres of a study, for `spellLine`: a pickup is a first measure cut short; a section in another metre begins a new
+ * measure.
+ */
+export function metrePlan(study: Study, built: Extent): MetreChange[] {
+  const changes: MetreChange[] = [];
+  let current: Metre | undefined;
+  study.sections.forEach((section, index) => {
+    const metre = metreOf(study, section);
+    if (metre === current) return;
+    const at = built.sections[index]!.start;
+    // A section of no length leaves two changes at one place: the later one holds.
+    if (changes.at(-1)?.at.equals(at)) changes.pop();
+    changes.push({ at, metre });
+    current = metre;
+  });
+  const pickup = study.pickup === undefined ? ZERO : toFraction(study.pickup);
+  if (pickup.compare(ZERO) > 0) {
+    const first = changes[0]!;
+    if (pickup.compare(parseMetre(first.metre).length) >= 0) {
+      throw new EngineError('invalid_argument', `A pickup is shorter than a measure; ${formatFraction(pickup)} is not.`, { path: 'pickup' });
+    }
+    const isCut = changes[1] !== undefined && changes[1].at.compare(pickup) <= 0;
+    if (!isCut) changes.splice(1, 0, { at: pickup, metre: first.metre });
+  }
+  return changes;
+}
+
+export type PlannedMeasure = {
+  /** counted from 0 */
+  readonly index: number;
+  /** as printed: from 1, a pickup being 0 */
+  readonly number: number;
+  readonly start: Fraction;
+  readonly length: Fraction;
+  /** the metre that it is written in */
+  readonly metre: Metre;
+};
+
+/** Every measure of a study, in order. The last may reach beyond the end of the piece. */
+export function planMeasures(study: Study, built: Extent): PlannedMeasure[] {
+  const plan = metrePlan(study, built);
+  const measures: PlannedMeasure[] = [];
+  const first = study.pickup !== undefined && plan.length > 1 && plan[1]!.metre === plan[0]!.metre ? 0 : 1;
+  plan.forEach(({ at, metre }, change) => {
+    const end = plan[change + 1]?.at ?? built.totalLength;
+    const { length } = parseMetre(metre);
+    const isLast = change === plan.length - 1;
+    const whole = end.sub(at).div(length);
+    const count = Number(whole.ceil().n);
+    if (measures.length + count > LIMITS.measures) throw new EngineError('too_large', `A study may have ${LIMITS.measures} measures.`);
+    for (let n = 0; n < count; n += 1) {
+      const start = at.add(length.mul(n));
+      const isCut = !isLast && n === count - 1 && start.add(length).compare(end) > 0;
+      const own = isCut ? end.sub(start) : length;
+      const index = measures.length;
+      measures.push({ index, number: index + first, start, length: own, metre: isCut ? metreOfLength(own, metre) : parseMetre(metre).text });
+    }
+  });
+  return measures;
+}
+
+/** The measure that a position falls in: the last that begins at or before it. */
+export function measureAt(measures: readonly PlannedMeasure[], position: Fraction): PlannedMeasure | undefined {
+  let low = 0;
+  let high = measures.length - 1;
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    if (measures[middle]!.start.compare(position) <= 0) low = middle;
+    else high = middle - 1;
+  }
+  return measures[low];
+}
+
+/** A position in words: “measure 5, beat 2 1/2”. */
+export function placeWords(measures: readonly PlannedMeasure[], position: Fraction): string {
+  const measure = measureAt(measures, position);
+  if (measure === undefined) return 'the beginning';
+  const beat = position.sub(measure.start).mul(parseMetre(measure.metre).unit).add(1);
+  return `measure ${measure.number}, beat ${beat.toFraction(true)}`;
+}
