@@ -1,0 +1,6 @@
+export { accounts } from './accounts';
+export { sessions } from './sessions';
+export { studies } from './studies';
+export { studyVersions } from './study-versions';
+export { userRole, users } from './users';
+export { verificationTokens } from './verification-tokens';
