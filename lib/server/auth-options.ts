@@ -1,0 +1,50 @@
+import 'server-only';
+import type { NextAuthOptions } from 'next-auth';
+import CredentialsProvider from 'next-auth/providers/credentials';
+import { z } from 'zod';
+import { getDatabase } from '@/db/client';
+import { PASSWORD_LENGTH, verifyPassword } from '@/db/password';
+import { getCredentials, normaliseEmail } from '@/db/queries/users';
+import { getEnv } from './env';
+import { SignInLimit } from './sign-in-limit';
+
+/** 254 is the longest address that mail can be sent to (RFC 5321, 4.5.3.1.3, less the angle brackets). */
+const credentials = z.object({ email: z.string().min(3).max(254), password: z.string().min(1).max(PASSWORD_LENGTH.max) });
+const limit = new SignInLimit();
+
+/**
+ * Signing in by address and password. The same answer, after the same time, for a wrong password and an unknown address.
+ * @throws Error `too_many_attempts`, which reaches the sign-in page as `?error=too_many_attempts`
+ */
+async function authorize(given: unknown, address: string) {
+  const read = credentials.safeParse(given);
+  if (!read.success) return null;
+  const email = normaliseEmail(read.data.email);
+  if (!limit.allow(address, email, Date.now())) throw new Error('too_many_attempts');
+  const account = await getCredentials(getDatabase(), email);
+  if (!(await verifyPassword(read.data.password, account?.passwordHash)) || !account) return null;
+  limit.succeed(address, email);
+  return { id: account.id, name: account.name, email: account.email, role: account.role };
+}
+
+function addressOf(headers: Record<string, unknown> | undefined): string {
+  const forwarded = headers?.['x-forwarded-for'];
+  return typeof forwarded === 'string' ? (forwarded.split(',')[0] ?? '').trim() : 'unknown';
+}
+
+/** The sign-in library's settings: sessions are signed tokens that carry the account's id and role. */
+export const getAuthOptions = (): NextAuthOptions => ({
+  secret: getEnv().NEXTAUTH_SECRET,
+  session: { strategy: 'jwt', maxAge: 30 * 24 * 60 * 60 },
+  pages: { signIn: '/sign-in', error: '/sign-in' },
+  providers: [
+    CredentialsProvider({
+      credentials: { email: { label: 'E-mail', type: 'email' }, password: { label: 'Password', type: 'password' } },
+      authorize: (given, req) => authorize(given, addressOf(req.headers)),
+    }),
+  ],
+  callbacks: {
+    jwt: ({ token, user }) => (user ? { ...token, id: user.id, role: user.role } : token),
+    session: ({ session, token }) => ({ ...session, user: { ...session.user, id: token.id, role: token.role } }),
+  },
+});

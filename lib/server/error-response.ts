@@ -1,0 +1,44 @@
+import 'server-only';
+import { ZodError } from 'zod';
+import { EngineError } from '@/engine';
+import { AppError, ERROR_STATUS } from '../errors';
+import type { ErrorResponse } from '../schemas/error';
+
+/** Codes of Node and of PostgreSQL that say: no connection, or a server that is starting or stopping. */
+const NO_DATABASE = new Set(['ECONNREFUSED', 'ECONNRESET', 'ENOTFOUND', 'ETIMEDOUT', 'EPIPE', '57P01', '57P02', '57P03', '53300', '08006']);
+
+function isDatabaseAway(error: unknown): boolean {
+  for (let at: unknown = error, depth = 0; at instanceof Error && depth < 5; at = at.cause, depth += 1) {
+    if ('code' in at && typeof at.code === 'string' && NO_DATABASE.has(at.code)) return true;
+    if (at.message === 'timeout exceeded when trying to connect' || at.message.startsWith('Connection terminated')) return true;
+  }
+  return false;
+}
+
+function answer(status: number, error: ErrorResponse['error']): Response {
+  return Response.json({ error } satisfies ErrorResponse, { status, headers: { 'cache-control': 'no-store' } });
+}
+
+/** The answer for anything that a handler throws. What is not a refusal is logged and told as a fault of ours. */
+export function errorResponse(error: unknown): Response {
+  if (error instanceof AppError) {
+    const { code, message, fields } = error;
+    return answer(ERROR_STATUS[code], { code, message, ...(fields && { fields }) });
+  }
+  if (error instanceof EngineError) {
+    const { code, message, path } = error;
+    return answer(422, { code, message, ...(path && { fields: { [path]: message } }) });
+  }
+  if (error instanceof ZodError) {
+    const fields = Object.fromEntries(error.issues.map((issue) => [issue.path.map(String).join('.'), issue.message]));
+    return answer(422, { code: 'invalid', message: error.issues[0]?.message ?? 'This cannot be accepted as it is.', fields });
+  }
+  if (error instanceof SyntaxError) {
+    return answer(400, { code: 'unreadable', message: 'The request could not be read: it is not JSON.' });
+  }
+  process.stderr.write(`${new Date().toISOString()} ${error instanceof Error ? error.stack ?? error.message : String(error)}\n`);
+  if (isDatabaseAway(error)) {
+    return answer(503, { code: 'unavailable', message: 'The database does not answer. Try again in a moment; nothing is lost.' });
+  }
+  return answer(500, { code: 'internal', message: 'Something went wrong on our side. Try again in a moment.' });
+}
