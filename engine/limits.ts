@@ -11,6 +11,10 @@ export const LIMITS = {
   repeatCount: 10_000,
   /** numerator and denominator of one typed length */
   fractionTerm: 1_000_000_000,
+  /** common denominator of lengths that are counted together: whole ticks stay exact in a plain number */
+  commonDenominator: Number.MAX_SAFE_INTEGER,
+  /** digits of the common denominator of lengths that are added, but not counted on one grid */
+  sumDigits: 200,
   /** characters of one typed fraction */
   fractionText: 64,
   /** greatest and least factor of an augmentation (its inverse) */

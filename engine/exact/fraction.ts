@@ -110,12 +110,25 @@ export function gcd(a: bigint, b: bigint): bigint {
 
 export const lcm = (a: bigint, b: bigint): bigint => (a / gcd(a, b)) * b;
 
-/** Sum of fractions, 0 for none. */
+/** Beyond it, sums would cost time without end. */
+const GREATEST_SUM = 10n ** BigInt(LIMITS.sumDigits);
+
+/**
+ * Sum of fractions, 0 for none.
+ * @throws EngineError `too_fine` where their common denominator has more digits than the limit
+ */
 export function sum(values: Iterable<Fraction>): Fraction {
   // One running numerator for each denominator, so that a long sum of few denominators stays cheap.
   const byDenominator = new Map<bigint, bigint>();
   for (const v of values) byDenominator.set(v.d, (byDenominator.get(v.d) ?? 0n) + v.s * v.n);
-  let total = ZERO;
-  for (const [d, n] of byDenominator) total = total.add(new Fraction(n, d));
-  return total;
+  let common = 1n;
+  for (const d of byDenominator.keys()) {
+    common = lcm(common, d);
+    if (common > GREATEST_SUM) {
+      throw new EngineError('too_fine', 'These lengths have too little in common to be added exactly. Use simpler lengths or factors.');
+    }
+  }
+  let total = 0n;
+  for (const [d, n] of byDenominator) total += n * (common / d);
+  return new Fraction(total, common);
 }

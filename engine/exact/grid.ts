@@ -1,4 +1,5 @@
 import { EngineError } from '../errors';
+import { LIMITS } from '../limits';
 import { Fraction, lcm } from './fraction';
 
 /**
@@ -15,7 +16,7 @@ export type Grid = {
 };
 
 /** Ticks above this could lose a unit in a plain number. */
-const GREATEST = BigInt(Number.MAX_SAFE_INTEGER);
+const GREATEST = BigInt(LIMITS.commonDenominator);
 
 const tooFine = (): never => {
   throw new EngineError(
