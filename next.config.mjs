@@ -10,7 +10,7 @@ const everywhere = [
 const data = [{ key: 'Content-Security-Policy', value: "default-src 'none'; frame-ancestors 'none'" }];
 
 /** @type {import('next').NextConfig} */
-export default {
+const config = {
   reactStrictMode: true,
   poweredByHeader: false,
   devIndicators: false,
@@ -19,3 +19,5 @@ export default {
     { source: '/api/:path*', headers: data },
   ],
 };
+
+export default config;

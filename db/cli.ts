@@ -1,11 +1,15 @@
 import { connect } from './connect';
+import { demoAccounts } from './demo/accounts';
 import { migrateDatabase } from './migrate';
 import { seedDemoAccounts, seedDemoStudies } from './seed';
 
 /** Any number that nothing else locks by: two starts at once take turns. */
 const LOCK = 7_310_532;
 
-/** Runs the named tasks (`migrate`, `studies`, `accounts`) in order on `DATABASE_URL`; migrations are read from ./db. */
+/**
+ * Runs the named tasks (`migrate`, `studies`, `accounts`) in order on `DATABASE_URL`; `accounts` prints them as JSON.
+ * Migrations are read from ./db, so it runs from the clone's top folder.
+ */
 async function run(tasks: readonly string[]): Promise<void> {
   const { database, pool } = connect(process.env.DATABASE_URL ?? '', 3);
   const lock = await pool.connect();
@@ -14,8 +18,10 @@ async function run(tasks: readonly string[]): Promise<void> {
     for (const task of tasks) {
       if (task === 'migrate') await migrateDatabase(database, 'db/migrations');
       else if (task === 'studies') await seedDemoStudies(database);
-      else if (task === 'accounts') await seedDemoAccounts(database);
-      else throw new Error(`There is no task “${task}”.`);
+      else if (task === 'accounts') {
+        await seedDemoAccounts(database);
+        process.stdout.write(JSON.stringify(demoAccounts));
+      } else throw new Error(`There is no task “${task}”.`);
     }
   } finally {
     lock.release(true);

@@ -1,0 +1,37 @@
+import { run } from './processes.mjs';
+import { Stop } from './stop.mjs';
+
+/** Keeps Debian from starting a database server of its own beside ours while the package is set up. */
+const POSTGRESQL = `
+apt-get update -q
+apt-get install -y -q --no-install-recommends postgresql-common
+conf=/etc/postgresql-common/createcluster.conf
+trap 'sed -i "/^create_main_cluster = false # sesqui$/d" "$conf"' EXIT
+echo 'create_main_cluster = false # sesqui' >> "$conf"
+apt-get install -y -q --no-install-recommends postgresql`;
+
+const CHROMIUM = `
+apt-get update -q
+apt-get install -y -q --no-install-recommends chromium`;
+
+async function install(name, packageName, script) {
+  const byHand = `apt-get update && apt-get install -y ${packageName}`;
+  if ((await run('apt-get', ['--version'], { quiet: true })).code !== 0) {
+    throw new Stop(`${name} is missing, and there is no apt-get here to install it: install ${name} and start again.`);
+  }
+  const isRoot = process.getuid() === 0;
+  if (!isRoot && (await run('sudo', ['-n', 'true'], { quiet: true })).code !== 0) {
+    throw new Stop(`${name} is missing, and this account may not install it: run “sudo sh -c '${byHand}'” (or as root “${byHand}”) and start again.`);
+  }
+  console.log(`Installing ${name} from Debian (once) …`);
+  const shell = ['env', 'DEBIAN_FRONTEND=noninteractive', 'sh', '-ec', script];
+  const [command, ...args] = isRoot ? shell : ['sudo', '-n', ...shell];
+  const { code, output } = await run(command, args, { quiet: true });
+  if (code !== 0) {
+    const reason = output.split('\n').find((line) => /^(E|Err):/.test(line)) ?? output.trim().split('\n').at(-1);
+    throw new Stop(`${name} could not be installed (${reason}): run “${byHand}” as root to see more, and start again.`);
+  }
+}
+
+export const installPostgres = () => install('PostgreSQL', 'postgresql', POSTGRESQL);
+export const installChromium = () => install('Chromium', 'chromium', CHROMIUM);

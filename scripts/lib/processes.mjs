@@ -1,0 +1,95 @@
+import { spawn } from 'node:child_process';
+import { Stop } from './stop.mjs';
+
+const children = new Set();
+const cleanups = [];
+let ending = false;
+
+/**
+ * Starts a program in a process group of its own, so that Ctrl-C reaches this script alone and it can end things in order.
+ * @param options - as for `spawn`; standard input is closed
+ */
+export function start(command, args, options = {}) {
+  const child = spawn(command, args, { stdio: ['ignore', 'inherit', 'inherit'], ...options, detached: true });
+  children.add(child);
+  child.once('close', () => children.delete(child));
+  child.once('error', () => children.delete(child));
+  return child;
+}
+
+/**
+ * Runs a program to its end.
+ * @param options - as for `spawn`; `quiet` keeps its output instead of showing it
+ * @returns `{ code, output, stdout }`: all that was kept, and the standard output alone; `code` is 127 where the program is
+ * not there, 1 where a signal ended it
+ */
+export function run(command, args, { quiet = false, ...options } = {}) {
+  const child = start(command, args, quiet ? { ...options, stdio: ['ignore', 'pipe', 'pipe'] } : options);
+  let output = '';
+  let stdout = '';
+  child.stdout?.on('data', (piece) => {
+    output += piece;
+    stdout += piece;
+  });
+  child.stderr?.on('data', (piece) => (output += piece));
+  return new Promise((resolve) => {
+    child.once('error', (error) => resolve({ code: 127, output: error.message, stdout }));
+    child.once('close', (code) => resolve({ code: code ?? 1, output, stdout }));
+  });
+}
+
+const alive = (child) => child.exitCode === null && child.signalCode === null && child.pid !== undefined;
+
+function signal(child, name) {
+  try {
+    process.kill(-child.pid, name);
+  } catch {
+    // it has ended meanwhile
+  }
+}
+
+/** Ends a started program and everything it started: asks, waits five seconds, then insists. */
+export async function endChild(child) {
+  if (!alive(child)) return;
+  const gone = new Promise((resolve) => child.once('exit', resolve));
+  signal(child, 'SIGTERM');
+  const insist = setTimeout(() => signal(child, 'SIGKILL'), 5_000);
+  await gone;
+  clearTimeout(insist);
+  signal(child, 'SIGKILL');
+}
+
+/** Remembers what must be undone at the end; the last is undone first. */
+export const atEnd = (undo) => cleanups.push(undo);
+
+/** Ends all that was started, undoes what must be undone, and leaves. */
+export async function end(code) {
+  if (ending) return;
+  ending = true;
+  await Promise.all([...children].map(endChild));
+  for (const undo of cleanups.reverse()) {
+    try {
+      await undo();
+    } catch (error) {
+      console.error(error instanceof Stop ? error.message : error);
+      code ||= 1;
+    }
+  }
+  process.exit(code);
+}
+
+/**
+ * Runs a script's main function: a `Stop` is shown as its sentence, a signal ends everything in order.
+ * @param interrupted - exit code after a signal
+ */
+export async function main(work, { interrupted = 0 } = {}) {
+  for (const name of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(name, () => void end(interrupted));
+  try {
+    const code = await work();
+    if (code !== undefined) await end(code);
+  } catch (error) {
+    if (ending) return;
+    console.error(error instanceof Stop ? `\n${error.message}` : error);
+    await end(1);
+  }
+}
