@@ -42,8 +42,5 @@ await main(async () => {
   if (elsewhere) console.log('It uses the database in DATABASE_URL; demo accounts are not made there.');
   else showAccounts(JSON.parse(printed));
   console.log('\nCtrl-C ends it.');
-  child.once('exit', () => {
-    console.error('The web server has ended.');
-    void end(1);
-  });
+  child.once('exit', () => void end(1, 'The web server has ended by itself: start again, and report what it said above if it does not stay up.'));
 });

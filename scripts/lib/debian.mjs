@@ -1,3 +1,4 @@
+import fs from 'node:fs';
 import { run } from './processes.mjs';
 import { Stop } from './stop.mjs';
 
@@ -34,4 +35,8 @@ async function install(name, packageName, script) {
 }
 
 export const installPostgres = () => install('PostgreSQL', 'postgresql', POSTGRESQL);
-export const installChromium = () => install('Chromium', 'chromium', CHROMIUM);
+
+/** Debian's Chromium for the browser tests, installed where it is missing. */
+export async function ensureChromium() {
+  if (!fs.existsSync('/usr/bin/chromium')) await install('Chromium', 'chromium', CHROMIUM);
+}

@@ -62,20 +62,35 @@ export async function endChild(child) {
 /** Remembers what must be undone at the end; the last is undone first. */
 export const atEnd = (undo) => cleanups.push(undo);
 
-/** Ends all that was started, undoes what must be undone, and leaves. */
-export async function end(code) {
+/** What went wrong, in a sentence; the trace of a fault of ours only where it is asked for. */
+function explain(error) {
+  if (error instanceof Stop) return error.message;
+  if (process.env.SESQUI_TRACE) return error.stack ?? String(error);
+  return `Something unexpected went wrong (${error.message ?? error}): set SESQUI_TRACE=1 and try again to see where.`;
+}
+
+/** Ends all that was started, undoes what must be undone, and leaves; `message` is shown unless the end has begun already. */
+export async function end(code, message) {
   if (ending) return;
   ending = true;
+  if (message) console.error(message);
   await Promise.all([...children].map(endChild));
   for (const undo of cleanups.reverse()) {
     try {
       await undo();
     } catch (error) {
-      console.error(error instanceof Stop ? error.message : error);
+      console.error(explain(error));
       code ||= 1;
     }
   }
   process.exit(code);
+}
+
+/** npm passes a signal on to the shell it runs scripts in, and that shell to nobody: its end is the signal then. */
+function endWithShell(code) {
+  if (!process.env.npm_lifecycle_event) return;
+  const shell = process.ppid;
+  setInterval(() => process.ppid !== shell && void end(code), 500).unref();
 }
 
 /**
@@ -83,13 +98,14 @@ export async function end(code) {
  * @param interrupted - exit code after a signal
  */
 export async function main(work, { interrupted = 0 } = {}) {
+  // A terminal that is gone takes no more words; that must not keep the rest from being ended.
+  for (const stream of [process.stdout, process.stderr]) stream.on('error', () => undefined);
   for (const name of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(name, () => void end(interrupted));
+  endWithShell(interrupted);
   try {
     const code = await work();
     if (code !== undefined) await end(code);
   } catch (error) {
-    if (ending) return;
-    console.error(error instanceof Stop ? `\n${error.message}` : error);
-    await end(1);
+    await end(1, `\n${explain(error)}`);
   }
 }
