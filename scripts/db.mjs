@@ -3,9 +3,11 @@ import { ownDatabase } from './lib/own-cluster.mjs';
 import { ensurePackages } from './lib/packages.mjs';
 import { prepareDatabase } from './lib/prepare-database.mjs';
 import { main } from './lib/processes.mjs';
+import { loadSettings } from './lib/settings.mjs';
 import { Stop } from './lib/stop.mjs';
 
 await main(async () => {
+  loadSettings();
   const [task] = process.argv.slice(2);
   if (task !== 'migrate' && task !== 'seed') throw new Stop('Say what to do: node scripts/db.mjs migrate, or node scripts/db.mjs seed.');
   await ensurePackages();

@@ -7,6 +7,7 @@ import { prepareDatabase } from './lib/prepare-database.mjs';
 import { end, main } from './lib/processes.mjs';
 import { requireWritable } from './lib/writable.mjs';
 import { authSecret } from './lib/secret.mjs';
+import { loadSettings } from './lib/settings.mjs';
 import { Stop } from './lib/stop.mjs';
 import { startWebServer } from './lib/web-server.mjs';
 
@@ -28,6 +29,7 @@ async function build() {
 }
 
 await main(async () => {
+  loadSettings();
   requireWritable();
   const port = await webPort();
   await ensurePackages();
@@ -37,7 +39,8 @@ await main(async () => {
   const tasks = elsewhere ? ['migrate', 'studies'] : ['migrate', 'studies', 'accounts'];
   const printed = await prepareDatabase(databaseUrl, tasks);
   if (!isDevelopment) await build();
-  const { url, child } = await startWebServer({ command: isDevelopment ? 'dev' : 'start', port, databaseUrl, secret: authSecret() });
+  const command = isDevelopment ? 'dev' : 'start';
+  const { url, child } = await startWebServer({ command, port, databaseUrl, secret: authSecret(), publicUrl: process.env.NEXTAUTH_URL });
   console.log(`\nSesqui is at ${url}`);
   if (elsewhere) console.log('It uses the database in DATABASE_URL; demo accounts are not made there.');
   else showAccounts(JSON.parse(printed));

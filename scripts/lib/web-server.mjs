@@ -16,16 +16,17 @@ async function isHealthy(url) {
 /**
  * Starts the web server on 127.0.0.1 and waits until it and its database answer.
  * @param command - `start` for the production build, `dev` for development
+ * @param publicUrl - the address that readers use, where it is another
  * @returns `{ url, child }`
  */
-export async function startWebServer({ command = 'start', port, databaseUrl, secret }) {
+export async function startWebServer({ command = 'start', port, databaseUrl, secret, publicUrl }) {
   const url = `http://127.0.0.1:${port}`;
   const env = {
     ...process.env,
     NODE_ENV: command === 'dev' ? 'development' : 'production',
     DATABASE_URL: databaseUrl,
     NEXTAUTH_SECRET: secret,
-    NEXTAUTH_URL: process.env.NEXTAUTH_URL ?? url,
+    NEXTAUTH_URL: publicUrl || url,
     NEXT_TELEMETRY_DISABLED: '1',
   };
   const child = start(process.execPath, [nextProgram, command, '-H', '127.0.0.1', '-p', String(port)], { cwd: root, env, stdio: ['ignore', 'pipe', 'pipe'] });
