@@ -21,7 +21,7 @@ export class SoundBank {
   private readonly buffers = new Map<string, AudioBuffer>();
 
   constructor(
-    private readonly context: BaseContext,
+    private readonly context: Pick<BaseContext, 'sampleRate' | 'createBuffer'>,
     private readonly voice: Voice = synthesised,
   ) {}
 

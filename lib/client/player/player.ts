@@ -118,13 +118,14 @@ export class StudyPlayer {
   async play(options?: PlayOptions): Promise<void> {
     const here = this.position();
     const command = this.halt();
+    let { loop } = this.state;
     if (options || this.state.status !== 'paused') {
-      const { from = here >= this.duration ? 0 : here, to, loop = false } = options ?? {};
+      const { from = here >= this.duration ? 0 : here, to } = options ?? {};
       this.wishes = { from: clamp(Number(from), 0, this.duration), to: to === undefined ? null : Number(to) };
       this.place = this.wishes.from;
-      this.store.set({ loop });
+      loop = options?.loop ?? false;
     }
-    this.store.set({ status: 'preparing', missed: 0, problem: null });
+    this.store.set({ status: 'preparing', loop, missed: 0, problem: null });
     const wanted = (): boolean => command === this.command;
     const on = await this.start();
     if (on) await this.prepareAll(wanted);

@@ -106,7 +106,10 @@ function finish(samples: Float64Array, rate: number, peak: number): Float32Array
   for (let i = 0; i < fade; i++) samples[samples.length - 1 - i] = (samples[samples.length - 1 - i]! * i) / fade;
   let highest = 0;
   for (const sample of samples) highest = Math.max(highest, Math.abs(sample));
-  return Float32Array.from(samples, (sample) => (highest > 0 ? (sample / highest) * peak : 0));
+  const scale = highest > 0 ? peak / highest : 0;
+  const scaled = new Float32Array(samples.length);
+  for (let i = 0; i < scaled.length; i++) scaled[i] = samples[i]! * scale;
+  return scaled;
 }
 
 export type Stroke = {
