@@ -6,25 +6,42 @@ import { getDatabase } from '@/db/client';
 import { PASSWORD_LENGTH, verifyPassword } from '@/db/password';
 import { getCredentials, normaliseEmail } from '@/db/queries/users';
 import { getEnv } from './env';
+import { logFault } from './log-fault';
 import { SignInLimit } from './sign-in-limit';
 
 /** 254 is the longest address that mail can be sent to (RFC 5321, 4.5.3.1.3, less the angle brackets). */
-const credentials = z.object({ email: z.string().min(3).max(254), password: z.string().min(1).max(PASSWORD_LENGTH.max) });
+const credentials = z.object({ email: z.string().max(254).regex(/^[^\s\p{Cc}]+@[^\s\p{Cc}]+$/u), password: z.string().min(1).max(PASSWORD_LENGTH.max) });
 const limit = new SignInLimit();
+
+class TooManyAttempts extends Error {}
 
 /**
  * Signing in by address and password. The same answer, after the same time, for a wrong password and an unknown address.
- * @throws Error `too_many_attempts`, which reaches the sign-in page as `?error=too_many_attempts`
+ * @throws TooManyAttempts, which reaches the sign-in page as `?error=too_many_attempts`
  */
 async function authorize(given: unknown, address: string) {
   const read = credentials.safeParse(given);
   if (!read.success) return null;
   const email = normaliseEmail(read.data.email);
-  if (!limit.allow(address, email, Date.now())) throw new Error('too_many_attempts');
+  if (!limit.allow(address, email, Date.now())) throw new TooManyAttempts('too_many_attempts');
   const account = await getCredentials(getDatabase(), email);
   if (!(await verifyPassword(read.data.password, account?.passwordHash)) || !account) return null;
   limit.succeed(address, email);
   return { id: account.id, name: account.name, email: account.email, role: account.role };
+}
+
+/**
+ * As `authorize`; but the sign-in library shows the message of whatever is thrown to the browser, so that only our own may pass.
+ * @throws Error `too_many_attempts`, or `unavailable` for what has been logged
+ */
+async function authorizeSafely(given: unknown, address: string) {
+  try {
+    return await authorize(given, address);
+  } catch (error) {
+    if (error instanceof TooManyAttempts) throw error;
+    logFault(error);
+    throw new Error('unavailable');
+  }
 }
 
 function addressOf(headers: Record<string, unknown> | undefined): string {
@@ -40,7 +57,7 @@ export const getAuthOptions = (): NextAuthOptions => ({
   providers: [
     CredentialsProvider({
       credentials: { email: { label: 'E-mail', type: 'email' }, password: { label: 'Password', type: 'password' } },
-      authorize: (given, req) => authorize(given, addressOf(req.headers)),
+      authorize: (given, req) => authorizeSafely(given, addressOf(req.headers)),
     }),
   ],
   callbacks: {

@@ -3,6 +3,7 @@ import { ZodError } from 'zod';
 import { EngineError } from '@/engine';
 import { AppError, ERROR_STATUS } from '../errors';
 import type { ErrorResponse } from '../schemas/error';
+import { logFault } from './log-fault';
 
 /** Codes of Node and of PostgreSQL that say: no connection, or a server that is starting or stopping. */
 const NO_DATABASE = new Set(['ECONNREFUSED', 'ECONNRESET', 'ENOTFOUND', 'ETIMEDOUT', 'EPIPE', '57P01', '57P02', '57P03', '53300', '08006']);
@@ -36,7 +37,7 @@ export function errorResponse(error: unknown): Response {
   if (error instanceof SyntaxError) {
     return answer(400, { code: 'unreadable', message: 'The request could not be read: it is not JSON.' });
   }
-  process.stderr.write(`${new Date().toISOString()} ${error instanceof Error ? error.stack ?? error.message : String(error)}\n`);
+  logFault(error);
   if (isDatabaseAway(error)) {
     return answer(503, { code: 'unavailable', message: 'The database does not answer. Try again in a moment; nothing is lost.' });
   }

@@ -37,6 +37,7 @@ describe('signing in', () => {
     ['nothing', '', ''],
     ['a password of 100,000 characters', 'composer@sesqui.example', 'x'.repeat(100_000)],
     ['an address of 100,000 characters', 'x'.repeat(100_000), 'x'],
+    ['an address without @', 'composer', 'x'],
     ['a zero byte', 'composer\0@sesqui.example', 'x'],
   ])('refuses %s', async (_, email, password) => {
     const { status, body } = await new Reader('192.0.2.4').signIn(email, password);
