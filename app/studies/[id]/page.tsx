@@ -1,0 +1,9 @@
+import type { Metadata } from 'next';
+import { StudyLoader } from '@/components/study/study-loader';
+
+export const metadata: Metadata = { title: 'Study' };
+
+export default async function StudyPage({ params }: { params: Promise<{ id: string }> }) {
+  const { id } = await params;
+  return <StudyLoader id={decodeURIComponent(id)} />;
+}

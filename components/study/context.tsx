@@ -1,0 +1,35 @@
+'use client';
+
+import { createContext, useContext } from 'react';
+import type { Edit } from '@/lib/client/study-edits';
+import type { EditorSnapshot, StudyEditor } from '@/lib/client/study-editor';
+import type { Place } from '@/lib/client/place';
+
+/** What is chosen on the page: a section, perhaps a statement of it, perhaps one attack of the subject. */
+export type Selection = {
+  readonly section: string;
+  readonly statement: string | null;
+  /** the subject's attack number */
+  readonly origin: number | null;
+};
+
+export type StudyContextValue = {
+  readonly editor: StudyEditor;
+  readonly state: EditorSnapshot;
+  readonly selection: Selection;
+  readonly select: (next: Partial<Selection> & { scroll?: boolean }) => void;
+  readonly place: Place;
+};
+
+export const StudyContext = createContext<StudyContextValue | null>(null);
+
+export function useStudy(): StudyContextValue {
+  const value = useContext(StudyContext);
+  if (value === null) throw new Error('A study component stands outside a study.');
+  return value;
+}
+
+/** Tries a change. @returns null, or the sentence that says why it is refused */
+export function attempt(editor: StudyEditor, edit: () => Edit): string | null {
+  return editor.edit((study) => edit()(study))?.message ?? null;
+}

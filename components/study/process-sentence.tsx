@@ -1,0 +1,82 @@
+'use client';
+
+import type { ReactNode } from 'react';
+import { type Section, type SentenceControl, type SentencePart, sectionSentence } from '@/engine';
+import { Token } from '../ui/token';
+import { useStudy } from './context';
+import { tint } from './family';
+import {
+  type Close,
+  CountControl,
+  EntriesControl,
+  FactorsControl,
+  InstrumentControl,
+  MirrorByControl,
+  MirrorOfControl,
+  ReadingControl,
+  RotationsControl,
+  SubjectControl,
+} from './sentence-controls';
+
+const LABELS: Record<SentenceControl['kind'], string> = {
+  subject: 'Subject',
+  count: 'Number of statements',
+  entries: 'Entries',
+  factors: 'Factors',
+  reading: 'Reading',
+  rotations: 'Rotation',
+  before: 'First changed',
+  'mirror-of': 'Section that is mirrored',
+  'mirror-by': 'What is reversed',
+  instrument: 'Instrument',
+};
+
+function Control({ section, control, close }: { section: Section; control: SentenceControl; close: Close }): ReactNode {
+  if (control.kind === 'instrument') {
+    const ids = section.kind === 'process' ? section.instruments : section.kind === 'free' ? section.lines.map((line) => line.instrument) : [];
+    return <InstrumentControl section={section} index={control.index} ids={ids} />;
+  }
+  if (section.kind === 'mirror') return control.kind === 'mirror-of' ? <MirrorOfControl section={section} /> : <MirrorByControl section={section} />;
+  if (section.kind !== 'process' || section.process.kind !== 'proportion') return null;
+  const { process } = section;
+  switch (control.kind) {
+    case 'subject':
+      return <SubjectControl section={section} close={close} />;
+    case 'count':
+      return <CountControl section={section} process={process} close={close} />;
+    case 'entries':
+      return <EntriesControl section={section} process={process} close={close} />;
+    case 'factors':
+      return <FactorsControl section={section} process={process} close={close} />;
+    case 'reading':
+      return <ReadingControl section={section} process={process} />;
+    case 'rotations':
+      return <RotationsControl section={section} process={process} close={close} />;
+    default:
+      return null;
+  }
+}
+
+function Word({ part, section }: { part: SentencePart; section: Section }) {
+  const { state } = useStudy();
+  const { control, text } = part;
+  if (control === undefined || control.kind === 'before') return <>{text}</>;
+  const colour = control.kind === 'instrument' ? { color: tint(state.study, control.instrument) } : undefined;
+  return (
+    <Token text={text} label={LABELS[control.kind]} {...(colour ? { style: colour } : {})}>
+      {(close) => <Control section={section} control={control} close={close} />}
+    </Token>
+  );
+}
+
+/** The sentence of a section, its words the controls. */
+export function ProcessSentence({ section }: { section: Section }) {
+  const { state } = useStudy();
+  return (
+    <p data-testid="process-sentence" className="max-w-[46ch] font-serif text-[22px] leading-[1.62] sm:text-[25px]">
+      {sectionSentence(state.study, section).map((part, index) => (
+        <Word key={`${section.id}-${index}-${part.control?.kind ?? 'text'}`} part={part} section={section} />
+      ))}
+    </p>
+  );
+}

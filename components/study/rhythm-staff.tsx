@@ -1,0 +1,57 @@
+'use client';
+
+import { useMemo } from 'react';
+import { EngineError, Fraction, type Metre, parseMetre, parseRhythm, spellLine } from '@/engine';
+import { ScoreLines } from '../score/score-lines';
+import type { DrawnScore } from '../score/spec';
+import { useStudy } from './context';
+
+type Spelled = { readonly score: DrawnScore } | { readonly error: string } | null;
+
+function spell(text: string, metre: Metre, sounds: number): Spelled {
+  try {
+    const values = parseRhythm(text);
+    const spelled = spellLine(values, metre);
+    const length = parseMetre(metre).length;
+    let attack = 0;
+    return {
+      score: {
+        measures: spelled.map((measure, index) => ({
+          index,
+          number: index + 1,
+          start: new Fraction(index).mul(length),
+          length,
+          metre: measure.metre,
+          signature: index === 0 ? metre : null,
+        })),
+        staves: [
+          {
+            id: 'rhythm',
+            name: '',
+            sounds: Math.max(sounds, ...values.map(({ sound }) => sound ?? 1)),
+            measures: spelled,
+            values,
+            sources: values.map((value) => (value.rest ? null : { statement: 'subject', origin: attack++ })),
+          },
+        ],
+      },
+    };
+  } catch (error) {
+    if (error instanceof EngineError) return { error: error.message };
+    throw error;
+  }
+}
+
+/** A rhythm text as one staff. Nothing is drawn where it cannot be read; where it cannot be written, the reason is. */
+export function RhythmStaff({ text, metre, instrument }: { text: string; metre: Metre; instrument?: string }) {
+  const { state } = useStudy();
+  const sounds = state.study.instruments.find(({ id }) => id === instrument)?.sounds ?? 1;
+  const spelled = useMemo(() => spell(text, metre, sounds), [text, metre, sounds]);
+  if (spelled === null) return null;
+  if ('error' in spelled) return <p className="mt-2 text-[14px] text-mark">{spelled.error}</p>;
+  return (
+    <div className="mt-1" data-testid="rhythm-staff">
+      <ScoreLines score={spelled.score} names={false} />
+    </div>
+  );
+}

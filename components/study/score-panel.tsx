@@ -1,0 +1,189 @@
+'use client';
+
+import { type MouseEvent, useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import { measureAt, metreOf, scoreOf } from '@/engine';
+import { ScoreLines } from '../score/score-lines';
+import type { SystemDrawing } from '../score/draw';
+import type { DrawnScore, SystemSpec } from '../score/spec';
+import { useStudy } from './context';
+
+/** The x of a position within a system, between the two drawn places about it. */
+function xAt({ places }: SystemDrawing, position: number): number {
+  const after = places.findIndex(([at]) => at > position);
+  if (after <= 0) return (after === 0 ? places[0] : places.at(-1))?.[1] ?? 0;
+  const [a, xa] = places[after - 1]!;
+  const [b, xb] = places[after]!;
+  return b === a ? xb : xa + ((xb - xa) * (position - a)) / (b - a);
+}
+
+/** Measure numbers, and the name of a section where it begins. */
+function Overlay({ spec, drawing, score }: { spec: SystemSpec; drawing: SystemDrawing | null; score: DrawnScore }) {
+  const { state } = useStudy();
+  const { study, built } = state;
+  if (!drawing) return null;
+  return (
+    <div aria-hidden className="pointer-events-none absolute inset-0">
+      {score.measures.slice(spec.first, spec.end).map((measure, column) => {
+        const left = drawing.measureLefts[column] ?? 0;
+        const next = measure.start.add(measure.length);
+        const begin = built.sections.findIndex(({ start, length }) => length.n > 0n && start.compare(measure.start) >= 0 && start.compare(next) < 0);
+        const section = study.sections[begin];
+        return (
+          <span key={measure.index} className="absolute top-0 flex items-baseline gap-2 whitespace-nowrap" style={{ left: left + 2 }}>
+            <span className="text-[11.5px] text-soft">{measure.number}</span>
+            {section && (
+              <span className="text-[14px] font-semibold">
+                {section.name}
+                {section.dynamics && <i className="ml-2 font-serif font-semibold">{section.dynamics}</i>}
+              </span>
+            )}
+          </span>
+        );
+      })}
+    </div>
+  );
+}
+
+/** The score: every instrument, in systems that fill the width, drawn near the screen only. */
+export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
+  const { state, selection, select, place } = useStudy();
+  const { study, built, measures } = state;
+  const [showSilent, setShowSilent] = useState(false);
+  const scroller = useRef<HTMLDivElement>(null);
+  const drawn = useRef(new Map<number, { spec: SystemSpec; drawing: SystemDrawing; host: HTMLDivElement }>());
+  const made = useMemo(() => scoreOf(study, built), [study, built]);
+  const score = useMemo<DrawnScore>(
+    () => ({
+      measures: made.measures,
+      staves: made.staves
+        .filter((staff) => staff.error === undefined)
+        .map(({ instrument, measures: own, values, sources }) => ({
+          id: instrument.id,
+          name: instrument.name,
+          sounds: Math.max(instrument.sounds ?? 1, ...values.map(({ sound }) => sound ?? 1)),
+          measures: own,
+          values,
+          sources: sources.map((source) =>
+            source === null ? null : { statement: source.statement.id, origin: source.statement.origins[source.value] ?? null },
+          ),
+        })),
+    }),
+    [made],
+  );
+  const failures = made.staves.flatMap(({ instrument, error }) => (error ? [{ instrument, error }] : []));
+
+  const section = study.sections.find(({ id }) => id === selection.section)!;
+  const chosen = built.statements.find(({ id }) => id === selection.statement);
+  const target = chosen ?? built.sections.find(({ id }) => id === section.id)!;
+  const targetMeasure = measureAt(measures, target.start)?.index ?? 0;
+  const subject = chosen?.subject ?? built.statements.find((s) => s.section === section.id && s.subject !== null)?.subject ?? null;
+
+  const light = useCallback(
+    (host: HTMLElement) => {
+      const same = new Set(built.statements.filter((s) => s.subject !== null && s.subject === subject).map(({ id }) => id));
+      for (const note of host.querySelectorAll<SVGElement>('[data-origin]')) {
+        const isLit = selection.origin !== null && note.dataset.origin === String(selection.origin) && same.has(note.dataset.statement ?? '');
+        note.classList.toggle('lit', isLit);
+      }
+    },
+    [built, subject, selection.origin],
+  );
+
+  useEffect(() => {
+    if (scroller.current) light(scroller.current);
+  }, [light]);
+
+  useEffect(() => {
+    const box = scroller.current;
+    const system = [...(box?.querySelectorAll<HTMLElement>('[data-testid="system"]') ?? [])].findLast((one) => Number(one.dataset.first) <= targetMeasure);
+    if (box && system) box.scrollTo({ top: system.offsetTop - box.offsetTop, behavior: 'smooth' });
+  }, [targetMeasure]);
+
+  useEffect(() => {
+    let shown: HTMLElement | null = null;
+    return place.watch((position) => {
+      const box = scroller.current;
+      if (!box) return;
+      for (const { spec, drawing, host } of drawn.current.values()) {
+        const line = host.parentElement?.querySelector<HTMLElement>('[data-cursor]');
+        if (!line) continue;
+        const from = measures[spec.first]?.start.valueOf() ?? 0;
+        const last = measures[spec.end - 1];
+        const end = last ? last.start.valueOf() + last.length.valueOf() : 0;
+        const isHere = position !== null && position >= from && position < end;
+        line.hidden = !isHere;
+        if (isHere) line.style.transform = `translateX(${xAt(drawing, position)}px)`;
+      }
+      if (position === null) return;
+      const now = measures.findLast((measure) => measure.start.valueOf() <= position)?.index ?? 0;
+      const system = [...box.querySelectorAll<HTMLElement>('[data-testid="system"]')].findLast((one) => Number(one.dataset.first) <= now);
+      if (system && system !== shown) {
+        if (shown !== null) box.scrollTo({ top: system.offsetTop - box.offsetTop });
+        shown = system;
+      }
+    });
+  }, [place, measures]);
+
+  const onClick = (event: MouseEvent<HTMLDivElement>) => {
+    const note = (event.target as Element).closest<SVGElement>('[data-statement]');
+    const statement = built.statements.find(({ id }) => id === note?.dataset.statement);
+    if (note && statement) {
+      select({ section: statement.section, statement: statement.id, origin: note.dataset.origin === undefined ? null : Number(note.dataset.origin) });
+      return;
+    }
+    const system = (event.target as Element).closest<HTMLElement>('[data-testid="system"]');
+    const one = system && drawn.current.get(Number(system.dataset.first));
+    if (!one) return;
+    const x = event.clientX - one.host.getBoundingClientRect().left;
+    const column = one.drawing.measureLefts.findLastIndex((left) => left <= x);
+    const measure = measures[one.spec.first + Math.max(column, 0)];
+    if (measure) onSeek(measure.start.valueOf());
+  };
+
+  const where = chosen ? `${study.instruments.find(({ id }) => id === chosen.instrument)?.name ?? ''}, ${section.name}` : section.name;
+  return (
+    <section aria-labelledby="score-heading" className="mt-10 min-w-0">
+      <div className="mb-2 flex flex-wrap items-baseline gap-x-5 gap-y-1">
+        <h2 id="score-heading" className="text-[15px] font-semibold">
+          Score
+        </h2>
+        <span className="text-[13px] text-soft">{`measure ${measures[targetMeasure]?.number ?? 1}, ${where}, ${metreOf(study, section)}`}</span>
+        <label className="ml-auto flex cursor-pointer items-baseline gap-2 text-[13.5px]">
+          <input type="checkbox" checked={showSilent} onChange={(event) => setShowSilent(event.target.checked)} className="accent-ink" />
+          Show silent staves
+        </label>
+      </div>
+      {failures.map(({ instrument, error }) => (
+        <p key={instrument.id} role="alert" className="mb-2 text-[14px] text-mark">
+          {`${instrument.name} cannot be written: ${error.message}`}
+        </p>
+      ))}
+      <div
+        ref={scroller}
+        tabIndex={0}
+        role="region"
+        aria-label="Score. The statements are described in the table below."
+        onClick={onClick}
+        className="relative max-h-[78vh] overflow-y-auto overflow-x-hidden border-y border-hair py-3"
+      >
+        <ScoreLines
+          score={score}
+          hideSilent={!showSilent}
+          scroller={scroller}
+          onDrawn={(spec, drawing, host) => {
+            if (drawing) drawn.current.set(spec.first, { spec, drawing, host });
+            light(host);
+            place.wake();
+          }}
+        >
+          {(spec, drawing) => (
+            <>
+              <Overlay spec={spec} drawing={drawing} score={score} />
+              <div data-cursor hidden className="pointer-events-none absolute left-0 w-[2px] bg-ink" style={{ top: 20, height: spec.height - 40 }} />
+            </>
+          )}
+        </ScoreLines>
+      </div>
+    </section>
+  );
+}
