@@ -64,7 +64,20 @@ export type PlannedMeasure = {
   readonly length: Fraction;
   /** the metre that it is written in */
   readonly metre: Metre;
+  /** the time signature that is printed before it, null where the one before still holds */
+  readonly signature: Metre | null;
 };
+
+/** A pickup is printed under the metre that it leads into; every other change of metre is printed where it happens. */
+function withSignatures(measures: readonly PlannedMeasure[], pickupMetre: Metre | null): PlannedMeasure[] {
+  let current: Metre | null = null;
+  return measures.map((measure, index) => {
+    const shown = index === 0 && pickupMetre !== null ? parseMetre(pickupMetre).text : measure.metre;
+    const signature = shown === current ? null : shown;
+    current = shown;
+    return { ...measure, signature };
+  });
+}
 
 /** Every measure of a study, in order. The last may reach beyond the end of the piece. */
 export function planMeasures(study: Study, built: Extent): PlannedMeasure[] {
@@ -83,10 +96,17 @@ export function planMeasures(study: Study, built: Extent): PlannedMeasure[] {
       const isCut = !isLast && n === count - 1 && start.add(length).compare(end) > 0;
       const own = isCut ? end.sub(start) : length;
       const index = measures.length;
-      measures.push({ index, number: index + first, start, length: own, metre: isCut ? metreOfLength(own, metre) : parseMetre(metre).text });
+      measures.push({
+        index,
+        number: index + first,
+        start,
+        length: own,
+        metre: isCut ? metreOfLength(own, metre) : parseMetre(metre).text,
+        signature: null,
+      });
     }
   });
-  return measures;
+  return withSignatures(measures, first === 0 ? plan[0]!.metre : null);
 }
 
 /** The measure that a position falls in: the last that begins at or before it. */
