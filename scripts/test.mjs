@@ -42,7 +42,8 @@ async function build() {
 /** The production server on the test database; undefined where it does not come up, which has been said then. */
 async function serve(databaseUrl) {
   try {
-    const { code } = await ensureBuild();
+    const { code, output } = await ensureBuild();
+    if (code !== 0 && !results.has('build')) console.error(output);
     if (code !== 0) throw new Stop('There is no production build to test against.');
     await prepareDatabase(databaseUrl, ['migrate', 'studies', 'accounts']);
     return await startWebServer({ port: await freePort(), databaseUrl, secret: randomBytes(32).toString('base64url') });
