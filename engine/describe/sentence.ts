@@ -5,7 +5,7 @@ import type { Reading } from '../rhythm/types';
 import type { Entries, FreeSection, MirrorSection, ProcessSection, ProportionProcess, Section, Study } from '../study/schema';
 import type { Step } from '../transform/steps';
 import { metreOf } from '../views/measures';
-import { inSentence, listWords, measureWords, times } from './words';
+import { inSentence, listWords, measureWords, plural, times } from './words';
 
 /** Which part of the document a word of the sentence stands for. */
 export type SentenceControl =
@@ -50,12 +50,16 @@ function stepWords(step: Step): string {
       return `stretched ${formatFraction(toFraction(step.factor))} times`;
     case 'diminish':
       return `shortened ${formatFraction(toFraction(step.factor))} times`;
-    case 'add':
-      return `each attack longer by ${formatFraction(toFraction(step.amount))}`;
+    case 'add': {
+      const amount = toFraction(step.amount);
+      return `each attack ${amount.s < 0n ? 'shorter' : 'longer'} by ${formatFraction(amount.abs())}`;
+    }
     case 'retrograde':
       return step.by === 'values' ? 'its values reversed' : 'its attacks reversed';
     case 'rotate':
-      return `rotated by ${step.steps} ${typeof step.by === 'object' ? `pulses of ${formatFraction(toFraction(step.by.pulse))}` : step.by}`;
+      return typeof step.by === 'object'
+        ? `rotated by ${plural(step.steps, 'pulse')} of ${formatFraction(toFraction(step.by.pulse))}`
+        : `rotated by ${plural(step.steps, step.by === 'values' ? 'value' : 'attack')}`;
   }
 }
 
@@ -68,8 +72,8 @@ function factorParts(process: ProportionProcess): SentencePart[] {
   return [{ text: ', at ' }, word(factors.join(', '), 'factors'), { text: factors.join() === '1' ? ' time its length, ' : ' times its length, ' }];
 }
 
-function readingPart(process: ProportionProcess): SentencePart {
-  const readings = process.readings ?? [process.reading ?? 'forwards'];
+function readingPart(process: ProportionProcess, count: number): SentencePart {
+  const readings = (process.readings ?? [process.reading ?? 'forwards']).slice(0, count);
   const distinct = readings.every((reading) => reading === readings[0]) ? readings.slice(0, 1) : readings;
   const words = listWords(distinct.map(readingWords));
   return word(distinct.length > 1 ? `${words} in turn` : words, 'reading');
@@ -79,6 +83,16 @@ function subjectPart(study: Study, section: ProcessSection): SentencePart {
   if (study.subjects.length < 2) return { text: 'The subject' };
   const subject = study.subjects.find(({ id }) => id === section.subject);
   return word(`“${subject?.name ?? section.subject ?? ''}”`, 'subject');
+}
+
+/** Instruments beyond the number of statements do not play: the sentence says so, and keeps them within reach. */
+function waitingParts(study: Study, section: ProcessSection, count: number): SentencePart[] {
+  const waiting = section.instruments.slice(count);
+  if (waiting.length === 0) return [];
+  const parts = instrumentParts(study, waiting).map(
+    ({ text, control }): SentencePart => (control?.kind === 'instrument' ? { text, control: { ...control, index: control.index + count } } : { text }),
+  );
+  return [{ text: ' Waiting for a statement: ' }, ...parts, { text: '.' }];
 }
 
 function processParts(study: Study, section: ProcessSection): SentencePart[] {
@@ -91,11 +105,13 @@ function processParts(study: Study, section: ProcessSection): SentencePart[] {
   }
   parts.push({ text: ' is stated ' }, word(times(count), 'count'));
   if (count > 1) parts.push({ text: ', ' }, word(entriesWords(process.entries ?? 'successive', metreOf(study, section)), 'entries'));
-  parts.push(...factorParts(process), readingPart(process));
-  if (process.rotations?.some((turns) => turns !== 0)) {
-    parts.push({ text: ', rotated by ' }, word(process.rotations.join(', '), 'rotations'), { text: ' values' });
+  parts.push(...factorParts(process), readingPart(process, count));
+  const turns = process.rotations?.slice(0, count) ?? [];
+  if (turns.some((turn) => turn !== 0)) {
+    parts.push({ text: ', rotated by ' }, word(turns.join(', '), 'rotations'), { text: turns.join() === '1' ? ' value' : ' values' });
   }
-  return [...parts, { text: ', by ' }, ...instrumentParts(study, section.instruments), { text: '.' }];
+  const playing = instrumentParts(study, section.instruments.slice(0, count));
+  return [...parts, { text: ', by ' }, ...playing, { text: '.' }, ...waitingParts(study, section, count)];
 }
 
 function freeParts(study: Study, section: FreeSection): SentencePart[] {

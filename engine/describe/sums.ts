@@ -4,8 +4,8 @@ import { ladder } from '../proportion/ladder';
 import { parseMetre } from '../rhythm/metre';
 import type { Section, Study } from '../study/schema';
 import type { BuiltStudy, Statement } from '../study/types';
-import { metreOf } from '../views/measures';
-import { listWords, measureNumber, measureWords } from './words';
+import { type PlannedMeasure, measureAt, metreOf, planMeasures } from '../views/measures';
+import { listWords, measureNumber, measureWord, measureWords } from './words';
 
 /** A total with the sum that makes it: `4 + 5 + 6 + 8 = 23 measures`. */
 export type Sum = {
@@ -30,7 +30,9 @@ export function sectionSum(study: Study, built: BuiltStudy, section: Section): S
   const metre = metreOf(study, section);
   const { length } = built.sections.find(({ id }) => id === section.id)!;
   const statements = built.statements.filter((s) => s.section === section.id && s.subject !== null);
-  return sumOf(isChain(statements) ? statements.map((s) => s.length) : [], length, metre);
+  // A line under the section may outlast its statements: then they do not add up to it, and no sum is shown.
+  const isWhole = isChain(statements) && sum(statements.map((s) => s.length)).equals(length);
+  return sumOf(isWhole ? statements.map((s) => s.length) : [], length, metre);
 }
 
 /** The length of the study with its sum over the sections, each in measures of its own metre. */
@@ -39,7 +41,7 @@ export function studySum(study: Study, built: BuiltStudy): Sum {
   const total = sum(counts);
   return {
     terms: counts.length < 2 ? '' : counts.map((count) => count.toFraction(true)).join(' + '),
-    total: `${total.toFraction(true)} ${total.compare(1) > 0 ? 'measures' : 'measure'}`,
+    total: `${total.toFraction(true)} ${measureWord(total)}`,
   };
 }
 
@@ -78,17 +80,17 @@ function wholeFactor(factor: Fraction, once: Fraction, measure: Fraction): Fract
   return (rounded.compare(1) < 0 ? rounded.add(1) : rounded).mul(measure).div(once);
 }
 
-function endRemark(study: Study, section: Section, statements: readonly Statement[], sectionStart: Fraction, factors: readonly Fraction[]): Remark | null {
+function endRemark(study: Study, section: Section, statements: readonly Statement[], measures: readonly PlannedMeasure[], factors: readonly Fraction[]): Remark | null {
   const metre = metreOf(study, section);
   const measure = parseMetre(metre).length;
+  const within = (position: Fraction) => position.sub(measureAt(measures, position)?.start ?? position).div(measure);
   for (const [index, statement] of statements.entries()) {
-    const end = statement.start.sub(sectionStart).add(statement.length).div(measure);
-    const over = end.sub(end.floor());
+    const whole = within(statement.start.add(statement.length));
+    const over = whole.sub(whole.floor());
     if (over.n === 0n) continue;
     const text = `Statement ${index + 1} ends ${formatFraction(over)} into a measure.`;
     const factor = factors[index];
-    const startsWhole = statement.start.sub(sectionStart).div(measure).d === 1n;
-    if (factor === undefined || !startsWhole) return { code: 'ends-inside', text, statement: index };
+    if (factor === undefined || within(statement.start).n !== 0n) return { code: 'ends-inside', text, statement: index };
     const mended = wholeFactor(factor, statement.length.div(factor), measure);
     const next = factors.map((one, n) => formatFraction(n === index ? mended : one));
     return { code: 'ends-inside', text, statement: index, mend: { label: `Make it ${measureWords(statement.length.div(factor).mul(mended), metre)}, at ${formatFraction(mended)}`, factors: next } };
@@ -102,8 +104,8 @@ export function sectionRemarks(study: Study, built: BuiltStudy, section: Section
   const factors = proportionFactors(section.process);
   const statements = built.statements.filter((s) => s.section === section.id && s.subject !== null);
   const isSuccessive = (section.process.entries ?? 'successive') === 'successive';
-  const start = built.sections.find(({ id }) => id === section.id)!.start;
-  const remarks = [isSuccessive ? stepsRemark(factors) : null, isSuccessive ? endRemark(study, section, statements, start, factors) : null];
+  if (!isSuccessive) return [];
+  const remarks = [stepsRemark(factors), endRemark(study, section, statements, planMeasures(study, built), factors)];
   return remarks.filter((remark) => remark !== null);
 }
 

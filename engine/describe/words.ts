@@ -31,17 +31,20 @@ export function listWords(items: readonly string[]): string {
   return `${items.slice(0, -1).join(', ')} and ${items.at(-1)}`;
 }
 
-export const plural = (n: number, word: string): string => `${n} ${word}${n === 1 ? '' : 's'}`;
+export const plural = (n: number, word: string): string => `${n} ${word}${Math.abs(n) === 1 ? '' : 's'}`;
 
 export const times = (n: number): string => (n === 1 ? 'once' : n === 2 ? 'twice' : `${n} times`);
 
 /** A length as measures of a metre, as mixed number: `4`, `2 1/3`. */
 export const measureNumber = (length: Fraction, metre: Metre): string => length.div(parseMetre(metre).length).toFraction(true);
 
+/** One measure or a part of one is a measure; none, and more than one, are measures. */
+export const measureWord = (count: Fraction): string => (count.n === 0n || count.compare(1) > 0 ? 'measures' : 'measure');
+
 /** “4 measures”, “1/2 measure”. */
 export function measureWords(length: Fraction, metre: Metre): string {
   const count = length.div(parseMetre(metre).length);
-  return `${count.toFraction(true)} ${count.compare(1) > 0 ? 'measures' : 'measure'}`;
+  return `${count.toFraction(true)} ${measureWord(count)}`;
 }
 
 /** An instrument's name as it stands inside a sentence. */

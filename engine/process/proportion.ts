@@ -40,6 +40,7 @@ export function state(subject: readonly TracedValue[], factor: Fraction, reading
 /** The subject at one factor after another: augmentation, diminution, canon in proportion. */
 export const proportion: ProcessRules<ProportionProcess> = {
   kind: 'proportion',
+  size: ({ process, subject }) => (process.factors?.length ?? process.count ?? 1) * subject.length,
   statements({ section, process, path, subject, instruments }) {
     const factors = proportionFactors(process, path);
     const once = sum(subject.map((v) => v.length));

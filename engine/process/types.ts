@@ -35,6 +35,8 @@ export type ProcessContext<P extends Process = Process> = {
 /** The rules of one process: what it states, and when. */
 export type ProcessRules<P extends Process = Process> = {
   readonly kind: P['kind'];
+  /** how many values the statements will have in all, found without stating them */
+  size(context: ProcessContext<P>): number;
   /** statements in order of number */
   statements(context: ProcessContext<P>): Placed[];
 };

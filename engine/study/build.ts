@@ -1,9 +1,10 @@
 import { EngineError } from '../errors';
-import { type Fraction, ZERO } from '../exact/fraction';
+import { type Fraction, ZERO, formatFraction, toFraction } from '../exact/fraction';
 import type { Placed } from '../process/types';
 import { parseMetre } from '../rhythm/metre';
 import { parseTempo } from '../rhythm/tempo';
 import type { Value } from '../rhythm/types';
+import { metreOf } from '../views/measures';
 import { assembleLine, statementsOf } from './line';
 import { locate } from './locate';
 import { findPalindrome } from './palindrome';
@@ -33,6 +34,14 @@ function checkIds(study: Study): void {
 }
 
 function checkMetresAndTempos(study: Study): void {
+  if (study.pickup !== undefined) {
+    locate({ path: 'pickup' }, () => {
+      const pickup = toFraction(study.pickup!);
+      const first = parseMetre(metreOf(study, study.sections[0]!));
+      if (pickup.compare(ZERO) > 0 && pickup.compare(first.length) < 0) return;
+      throw new EngineError('invalid_argument', `A pickup lasts some time and is shorter than a measure of ${first.text}; ${formatFraction(pickup)} is not.`);
+    });
+  }
   locate({ path: 'metre' }, () => parseMetre(study.metre));
   locate({ path: 'tempo' }, () => parseTempo(study.tempo));
   study.sections.forEach((section, index) => {

@@ -42,9 +42,11 @@ const proportionSchema = z
     readings: z.array(reading).min(1).max(LIMITS.statements).optional(),
     rotations: z.array(turn).min(1).max(LIMITS.statements).optional(),
   })
-  .refine((p) => (p.factors === undefined) === (p.ratio !== undefined && p.count !== undefined), {
-    message: 'A proportion has either a list of factors, or a ratio and a count.',
-  });
+  .refine(
+    ({ factors, ratio, count }) =>
+      factors === undefined ? ratio !== undefined && count !== undefined : ratio === undefined && count === undefined,
+    { message: 'A proportion has either a list of factors, or a ratio and a count.' },
+  );
 
 const rotationSchema = z.strictObject({
   kind: z.literal('rotation'),

@@ -52,7 +52,6 @@ export class SectionBuilder {
           : section.lines.map((line, n) => this.line(section.id, line, `${path}.lines.${n}`));
     const under = (section.under ?? []).map((line, n) => this.line(section.id, line, `${path}.under.${n}`));
     const placed = [...main, ...under];
-    this.count(placed.reduce((n, { values }) => n + values.length, 0));
     const length = placed.reduce((longest, { start, length: own }) => {
       const end = start.add(own);
       return end.compare(longest) > 0 ? end : longest;
@@ -60,7 +59,8 @@ export class SectionBuilder {
     return { placed, length };
   }
 
-  private count(values: number): void {
+  /** Counts values before they are made, so that too many are never made. */
+  private reserve(values: number): void {
     this.values += values;
     if (this.values > LIMITS.studyValues) {
       throw new EngineError('too_large', `A study may have ${LIMITS.studyValues} values in all. This one has more.`);
@@ -97,18 +97,21 @@ export class SectionBuilder {
     });
     const subject = this.subject(section.subject, { section: section.id, path: `${path}.subject` });
     const prepared = locate({ path: `${path}.before` }, () => applySteps(subject, section.before ?? []));
-    return rules.statements({
+    const context = {
       section,
       process: section.process,
       path: where.path,
       subject: prepared.map((value) => (value.rest ? { ...value, origin: null } : value)),
       instruments: section.instruments,
-    });
+    };
+    this.reserve(rules.size(context));
+    return rules.statements(context);
   }
 
   private line(section: string, line: { instrument: string; rhythm: string }, path: string): Placed {
     if (!this.instruments.has(line.instrument)) throw unknownInstrument(line.instrument, { section, path: `${path}.instrument` });
     const rhythm: Rhythm = locate({ path: `${path}.rhythm` }, () => parseRhythm(line.rhythm));
+    this.reserve(rhythm.length);
     return {
       start: ZERO,
       length: sum(rhythm.map((v) => v.length)),
@@ -129,6 +132,7 @@ export class SectionBuilder {
     }
     const source = this.content(section.of);
     const by = section.by ?? 'values';
+    this.reserve(source.placed.reduce((n, { values }) => n + values.length, 0));
     return source.placed
       .map((placed) => {
         const assigned = placed.assigned === undefined ? {} : { assigned: [...placed.assigned].reverse() };

@@ -1,5 +1,5 @@
 import { EngineError } from '../errors';
-import { Fraction, ZERO, formatFraction, toFraction } from '../exact/fraction';
+import { type Fraction, ZERO, toFraction } from '../exact/fraction';
 import { LIMITS } from '../limits';
 import { type Metre, metreOfLength, parseMetre } from '../rhythm/metre';
 import type { MirrorSection, Section, Study } from '../study/schema';
@@ -46,9 +46,6 @@ export function metrePlan(study: Study, built: Extent): MetreChange[] {
   const pickup = study.pickup === undefined ? ZERO : toFraction(study.pickup);
   if (pickup.compare(ZERO) > 0) {
     const first = changes[0]!;
-    if (pickup.compare(parseMetre(first.metre).length) >= 0) {
-      throw new EngineError('invalid_argument', `A pickup is shorter than a measure; ${formatFraction(pickup)} is not.`, { path: 'pickup' });
-    }
     const isCut = changes[1] !== undefined && changes[1].at.compare(pickup) <= 0;
     if (!isCut) changes.splice(1, 0, { at: pickup, metre: first.metre });
   }
@@ -67,6 +64,16 @@ export type PlannedMeasure = {
   /** the time signature that is printed before it, null where the one before still holds */
   readonly signature: Metre | null;
 };
+
+/** The metre of a measure cut short; where no metre has that length, the one that was cut: spelling then says why it fails. */
+function cutMetre(length: Fraction, metre: Metre): Metre {
+  try {
+    return metreOfLength(length, metre);
+  } catch (error) {
+    if (error instanceof EngineError) return parseMetre(metre).text;
+    throw error;
+  }
+}
 
 /** A pickup is printed under the metre that it leads into; every other change of metre is printed where it happens. */
 function withSignatures(measures: readonly PlannedMeasure[], pickupMetre: Metre | null): PlannedMeasure[] {
@@ -101,7 +108,7 @@ export function planMeasures(study: Study, built: Extent): PlannedMeasure[] {
         number: index + first,
         start,
         length: own,
-        metre: isCut ? metreOfLength(own, metre) : parseMetre(metre).text,
+        metre: isCut ? cutMetre(own, metre) : parseMetre(metre).text,
         signature: null,
       });
     }
