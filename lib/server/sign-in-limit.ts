@@ -32,8 +32,10 @@ export class SignInLimit {
     return fromHere && fromAnywhere;
   }
 
-  /** Forgets the tries from one address once the right password has been given. */
+  /** Forgets the tries from one address, and this one of the account's, once the right password has been given. */
   succeed(address: string, email: string): void {
     this.counts.delete(`${address} ${email}`);
+    const account = this.counts.get(email);
+    if (account) account.tries -= 1;
   }
 }

@@ -24,6 +24,7 @@ export function start(command, args, options = {}) {
  * not there, 1 where a signal ended it
  */
 export function run(command, args, { quiet = false, ...options } = {}) {
+  const begunAtEnd = ending;
   const child = start(command, args, quiet ? { ...options, stdio: ['ignore', 'pipe', 'pipe'] } : options);
   let output = '';
   let stdout = '';
@@ -34,7 +35,10 @@ export function run(command, args, { quiet = false, ...options } = {}) {
   child.stderr?.on('data', (piece) => (output += piece));
   return new Promise((resolve) => {
     child.once('error', (error) => resolve({ code: 127, output: error.message, stdout }));
-    child.once('close', (code) => resolve({ code: code ?? 1, output, stdout }));
+    child.once('close', (code) => {
+      // What the end has cut off goes no further: its caller would take it for a failure and say so.
+      if (ending === begunAtEnd) resolve({ code: code ?? 1, output, stdout });
+    });
   });
 }
 

@@ -90,4 +90,12 @@ describe('SignInLimit', () => {
     const allowed = Array.from({ length: 80 }, (_, i) => tries(limit, 1, `sender ${i}`, 0));
     expect(allowed.reduce((a, b) => a + b, 0)).toBe(50);
   });
+
+  it('does not count right passwords against an account', () => {
+    const limit = new SignInLimit();
+    for (let i = 0; i < 200; i += 1) {
+      expect(limit.allow(`sender ${i}`, 'a@sesqui.example', 0)).toBe(true);
+      limit.succeed(`sender ${i}`, 'a@sesqui.example');
+    }
+  });
 });
