@@ -33,11 +33,16 @@ describe('passwords', () => {
     const hash = await hashPassword('known to the keeper');
     const time = async (kept: string | null) => {
       const started = performance.now();
-      for (let i = 0; i < 3; i += 1) await verifyPassword('something else', kept);
+      await verifyPassword('something else', kept);
       return performance.now() - started;
     };
-    const [known, unknown] = [await time(hash), await time(null)];
-    expect(unknown / known).toBeGreaterThan(0.4);
-    expect(unknown / known).toBeLessThan(2.5);
+    // The quickest of several, in turn: what else the machine does only ever makes one slower.
+    let [known, unknown] = [Infinity, Infinity];
+    for (let i = 0; i < 4; i += 1) {
+      known = Math.min(known, await time(hash));
+      unknown = Math.min(unknown, await time(null));
+    }
+    expect(unknown / known).toBeGreaterThan(0.5);
+    expect(unknown / known).toBeLessThan(2);
   });
 });
