@@ -41,6 +41,9 @@ export { statementsOf, type LineSource } from './study/line';
 export { proportionFactors } from './process/proportion';
 export type { BuiltSection, BuiltStudy, Line, Palindrome, PalindromeSense, Statement } from './study/types';
 
+export { spellLine } from './notation/spell-line';
+export { SpellingError } from './notation/spelling-error';
+export { symbolLength, writtenLength } from './notation/symbol-length';
 export type { BeamMark, Base, MetrePlan, NotationMeasure, NotationSymbol, TupletMark } from './notation/types';
 export type { PlayEvent } from './views/types';
 export { clockOf, formatClock, spokenClock, type Clock, type ClockSpan } from './views/clock';
@@ -54,6 +57,7 @@ export {
   type MetreChange,
   type PlannedMeasure,
 } from './views/measures';
+export { scoreOf, type Score, type Staff } from './views/score';
 export { playEvents } from './views/play-events';
 export { threadsOf, type Thread, type ThreadReading, type ThreadRow, type ThreadTick, type Threads } from './views/threads';
 

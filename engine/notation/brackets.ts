@@ -1,0 +1,94 @@
+import type { MetreNode } from './tree';
+
+/** A tuplet bracket over [start, end) of a measure: `actual` units in the time of `normal`. */
+export type Bracket = { readonly start: number; readonly end: number; readonly actual: number; readonly normal: number };
+
+/**
+ * Conventional ratios (check values 11.7: the next lower normal value): over a span that halves, 3:2, 5:4, 6:4, 7:4 and 9:8;
+ * over three such, as in a compound beat, 5:3 and 7:6.
+ */
+const PLAIN: readonly (readonly [number, number])[] = [[3, 2], [5, 4], [6, 4], [7, 4], [9, 8]];
+const COMPOUND: readonly (readonly [number, number])[] = [[5, 3], [7, 6]];
+
+const isPowerOfTwo = (n: number): boolean => n > 0 && Number.isInteger(Math.log2(n));
+
+/** What a choice of brackets costs; small is legible. Weights are a setting of ours. */
+const COST = { symbol: 4, bracket: 7, cutValue: 4, wider: 1 } as const;
+
+export type BracketPlan = { readonly cost: number; readonly brackets: readonly Bracket[] };
+
+export type BracketFinder = {
+  /**
+   * The cheapest set of brackets that puts every boundary on the grid of its bracket, or null.
+   * @param edges - where values begin and end, sorted, measure's ends included
+   */
+  find(node: MetreNode, edges: readonly number[]): BracketPlan | null;
+};
+
+/**
+ * @param whole - integers of one whole note
+ * @param spell - number of symbols that the content of a bracket needs
+ */
+export function bracketsOn(whole: number, spell: (bracket: Bracket) => number): BracketFinder {
+  const least = whole / 256;
+  const isPlain = (edge: number): boolean => edge % least === 0;
+
+  function fits({ start, end, actual, normal }: Bracket, edges: readonly number[]): boolean {
+    return edges.every((edge) => edge <= start || edge >= end || ((edge - start) * actual * 256) % (whole * normal) === 0);
+  }
+
+  function ratiosFor(span: number): readonly (readonly [number, number])[] {
+    // The span over a whole note in lowest terms: 1 or 3 over a power of two, or a power of two.
+    for (const [factor, ratios] of [[1, PLAIN], [3, COMPOUND]] as const) {
+      const over = (whole * factor) / span;
+      const under = span / (whole * factor);
+      if (isPowerOfTwo(over) || isPowerOfTwo(under)) return ratios.filter(([, normal]) => (span * 256) / normal >= whole);
+    }
+    return [];
+  }
+
+  function overSpan(start: number, end: number, edges: readonly number[]): BracketPlan | null {
+    const span = end - start;
+    const inner = edges.filter((edge) => edge > start && edge < end);
+    let best: BracketPlan | null = null;
+    for (const [actual, normal] of ratiosFor(span)) {
+      const bracket = { start, end, actual, normal };
+      if (!fits(bracket, inner)) continue;
+      const unit = span / actual;
+      // Two ways to write thirds: six units only where all six are attacked and nothing finer is.
+      const isSixths = actual === 6 && inner.length === 5 && inner.every((edge) => Number.isInteger((edge - start) / unit));
+      const cost =
+        COST.bracket +
+        COST.symbol * spell(bracket) +
+        (edges.includes(end) ? 0 : COST.cutValue) +
+        Math.round((COST.wider * span * 8) / whole) +
+        (actual === 6 && !isSixths ? 2 : 0) -
+        (isSixths ? 1 : 0);
+      if (best === null || cost < best.cost) best = { cost, brackets: [bracket] };
+    }
+    return best;
+  }
+
+  const cheaper = (a: BracketPlan | null, b: BracketPlan | null): BracketPlan | null => (a === null ? b : b === null || a.cost <= b.cost ? a : b);
+  const together = (a: BracketPlan | null, b: BracketPlan | null): BracketPlan | null =>
+    a === null || b === null ? null : { cost: a.cost + b.cost, brackets: [...a.brackets, ...b.brackets] };
+
+  function find(node: MetreNode, edges: readonly number[]): BracketPlan | null {
+    const inner = edges.filter((edge) => edge > node.start && edge < node.end);
+    if (inner.every(isPlain)) return { cost: COST.symbol * edges.filter((edge) => edge >= node.start && edge < node.end).length, brackets: [] };
+    let best = overSpan(node.start, node.end, edges);
+    if (node.parts.length > 0) {
+      // Parts one by one, or two neighbours under one bracket.
+      const plans: (BracketPlan | null)[] = [{ cost: 0, brackets: [] }];
+      node.parts.forEach((part, index) => {
+        let plan = together(plans[index]!, find(part, edges));
+        const before = node.parts[index - 1];
+        if (before && node.parts.length > 2 && node.kind !== 'groups') plan = cheaper(plan, together(plans[index - 1]!, overSpan(before.start, part.end, edges)));
+        plans.push(plan);
+      });
+      best = cheaper(best, plans.at(-1)!);
+    }
+    return best;
+  }
+  return { find };
+}
