@@ -17,7 +17,7 @@ const zones = [
 
 const beyondTheEngine = ['react', 'react/*', 'react-dom', 'react-dom/*', 'next', 'next/*', 'next-auth*', 'drizzle-orm*', 'pg', '@tanstack/*', 'tone', 'vexflow*', 'node:*', '@/*'];
 
-export default [
+const config = [
   { ignores: ['node_modules/**', '.next/**', '.data/**', 'next-env.d.ts', 'test-results/**', 'playwright-report/**'] },
   ...next,
   ...coreWebVitals,
@@ -42,3 +42,5 @@ export default [
     },
   },
 ];
+
+export default config;

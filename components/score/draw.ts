@@ -106,8 +106,7 @@ function makeBeams(vf: VexFlow, notes: readonly Note[]): Vex.Beam[] {
     group.push(one);
     if (first === 'end' && group.length > 1) {
       const beam = new vf.Beam(group.map(({ note }) => note));
-      beam.renderOptions.maxSlope = 0;
-      beam.renderOptions.minSlope = 0;
+      beam.renderOptions.flatBeams = true;
       beams.push(beam);
       // A level that ends and begins again between two symbols is a secondary break.
       const breaks = group.flatMap(({ symbol }, index) => {

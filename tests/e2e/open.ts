@@ -1,0 +1,31 @@
+import type { Page } from '@playwright/test';
+import { expect } from '../helpers/browser';
+
+/** Opens a study and waits until its sentence stands. */
+export async function openStudy(page: Page, id = 'lock-gates'): Promise<void> {
+  await page.goto(`/studies/${id}`);
+  await expect(page.getByTestId('process-sentence')).toBeVisible();
+}
+
+/** The words of the sentence, as they are read. */
+export const sentence = (page: Page) => page.getByTestId('process-sentence');
+
+/** A word of the sentence, by what it stands for. */
+export const word = (page: Page, label: string, nth = 0) => sentence(page).getByRole('button', { name: new RegExp(`^${label}: `) }).nth(nth);
+
+/** Opens a word, types into its field and sets it. */
+export async function setWord(page: Page, label: string, text: string): Promise<void> {
+  await word(page, label).click();
+  const dialog = page.getByRole('dialog', { name: label });
+  await dialog.getByRole('textbox').fill(text);
+  await dialog.getByRole('button', { name: 'Set' }).click();
+}
+
+/** Waits until the first systems of the score are drawn, and gives the drawing. */
+export async function drawnScore(page: Page) {
+  const systems = page.getByRole('region', { name: /^Score/ }).getByTestId('system');
+  await systems.first().scrollIntoViewIfNeeded();
+  await expect(systems.first().locator('svg').first()).toBeVisible();
+  await expect(systems.first().locator('.vf-stavenote').first()).toBeAttached();
+  return systems;
+}
