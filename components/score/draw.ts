@@ -1,6 +1,6 @@
 import type * as Vex from 'vexflow/bravura';
 import type { NotationSymbol } from '@/engine';
-import { STAFF_HEIGHT, SYSTEM_TOP, onsets } from './layout';
+import { SYSTEM_TOP, onsets } from './layout';
 import type { DrawnScore, DrawnStaff, SystemSpec } from './spec';
 
 type VexFlow = typeof Vex;
@@ -183,7 +183,7 @@ export function drawSystem(vf: VexFlow, host: HTMLDivElement, score: DrawnScore,
     const width = widths[column]!;
     measureLefts.push(x * scale);
     const drawn = staves.map((staff, row) => {
-      const stave = new vf.Stave(x, SYSTEM_TOP / scale + (row * STAFF_HEIGHT) / scale - 22, width, { leftBar: column > 0 });
+      const stave = new vf.Stave(x, SYSTEM_TOP / scale + (row * spec.pitch) / scale - 22, width, { leftBar: column > 0 });
       stave.setConfigForLines(staffShape(staff.sounds).lines.toReversed().map((visible) => ({ visible })));
       if (column === 0) stave.addClef('percussion');
       if (planned.signature !== null) stave.addTimeSignature(planned.signature);
@@ -203,7 +203,10 @@ export function drawSystem(vf: VexFlow, host: HTMLDivElement, score: DrawnScore,
     cells.forEach(({ notes, voice, beams, tuplets }, row) => {
       if (notes.length === 0) return;
       const stave = drawn[row]!;
-      voice.setStave(stave).draw(context, stave);
+      for (const { note } of notes) note.setStave(stave);
+      // Stems take their beamed lengths before accents are placed above them.
+      for (const beam of beams) beam.postFormat();
+      voice.draw(context, stave);
       for (const beam of beams) beam.setContext(context).draw();
       for (const tuplet of tuplets) tuplet.setContext(context).draw();
       for (const one of notes) {

@@ -4,7 +4,8 @@ import type { DrawnScore, DrawnStaff, SystemSpec } from './spec';
 /** CSS pixels: what a system begins with, and the room about a staff. */
 export const OPENING = 36;
 export const SIGNATURE = 34;
-export const STAFF_HEIGHT = 78;
+/** from one staff to the next where names stand beside them, and where they stand beneath */
+export const STAFF_PITCH = { beside: 80, beneath: 94 } as const;
 export const SYSTEM_TOP = 34;
 export const SYSTEM_GAP = 26;
 
@@ -51,13 +52,13 @@ export function measureWidth(score: DrawnScore, index: number): number {
 }
 
 /** Breaks measures into systems that fill the width; a system keeps at least one measure. */
-export function breakSystems(score: DrawnScore, width: number, options: { hideSilent: boolean }): SystemSpec[] {
+export function breakSystems(score: DrawnScore, width: number, options: { hideSilent: boolean; pitch: number }): SystemSpec[] {
   const natural = score.measures.map((_, index) => measureWidth(score, index));
   const systems: SystemSpec[] = [];
   let first = 0;
   while (first < natural.length) {
     let end = first;
-    let room = OPENING + (score.measures[first]!.signature === null ? 0 : 0);
+    let room = OPENING;
     while (end < natural.length && (end === first || room + natural[end]! <= width)) {
       room += natural[end]!;
       end += 1;
@@ -67,7 +68,7 @@ export function breakSystems(score: DrawnScore, width: number, options: { hideSi
     const factor = isLast ? Math.min(stretch, 1.35) : stretch;
     const widths = natural.slice(first, end).map((one, index) => one * factor + (index === 0 ? OPENING : 0));
     const staves = systems.length === 0 || !options.hideSilent ? score.staves : sounding(score.staves, first, end);
-    systems.push({ first, end, widths, staves, height: SYSTEM_TOP + staves.length * STAFF_HEIGHT + SYSTEM_GAP });
+    systems.push({ first, end, widths, staves, pitch: options.pitch, height: SYSTEM_TOP + staves.length * options.pitch + SYSTEM_GAP });
     first = end;
   }
   return systems;

@@ -3,7 +3,7 @@
 import { type ReactNode, type RefObject, useMemo, useRef } from 'react';
 import { useWidth } from '../study/use-width';
 import type { SystemDrawing } from './draw';
-import { breakSystems, signatureOf } from './layout';
+import { STAFF_PITCH, breakSystems, signatureOf } from './layout';
 import type { DrawnScore, SystemSpec } from './spec';
 import { System } from './system';
 
@@ -29,8 +29,8 @@ export function ScoreLines({
   const width = useWidth(frame);
   const labels = !names || width < 720 ? 0 : 108;
   const systems = useMemo(
-    () => (width === 0 ? [] : breakSystems(score, width - labels - 2, { hideSilent })),
-    [score, width, labels, hideSilent],
+    () => (width === 0 ? [] : breakSystems(score, width - labels - 2, { hideSilent, pitch: names && labels === 0 ? STAFF_PITCH.beneath : STAFF_PITCH.beside })),
+    [score, width, labels, hideSilent, names],
   );
   return (
     <div ref={frame}>

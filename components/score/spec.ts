@@ -23,5 +23,7 @@ export type SystemSpec = {
   /** CSS pixels, one for each measure, the opening of the system included in the first */
   readonly widths: readonly number[];
   readonly staves: readonly DrawnStaff[];
+  /** from one staff to the next */
+  readonly pitch: number;
   readonly height: number;
 };

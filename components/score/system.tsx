@@ -2,7 +2,7 @@
 
 import { type ReactNode, type RefObject, useEffect, useRef, useState } from 'react';
 import { type SystemDrawing, drawSystem, loadVexFlow } from './draw';
-import { SYSTEM_TOP, STAFF_HEIGHT } from './layout';
+import { SYSTEM_TOP } from './layout';
 import type { DrawnScore, SystemSpec } from './spec';
 
 /** Whether an element is within a screen or so of being seen. */
@@ -84,7 +84,7 @@ export function System({
           <span
             key={staff.id}
             className="absolute left-0 truncate pr-2 text-[13px] font-semibold leading-tight"
-            style={{ top: SYSTEM_TOP + row * STAFF_HEIGHT + 30, width: labels }}
+            style={{ top: SYSTEM_TOP + row * spec.pitch + 30, width: labels }}
           >
             {staff.name}
           </span>
@@ -93,7 +93,7 @@ export function System({
         {names &&
           labels === 0 &&
           spec.staves.map((staff, row) => (
-            <span key={staff.id} className="absolute left-0 text-[11.5px] leading-none text-soft" style={{ top: SYSTEM_TOP + row * STAFF_HEIGHT - 2 }}>
+            <span key={staff.id} className="absolute left-1 text-[11.5px] leading-none text-soft" style={{ top: SYSTEM_TOP + row * spec.pitch + 62 }}>
               {staff.name}
             </span>
           ))}

@@ -8,7 +8,7 @@ import { useStudy } from './context';
 
 type Spelled = { readonly score: DrawnScore } | { readonly error: string } | null;
 
-function spell(text: string, metre: Metre, sounds: number): Spelled {
+function spell(text: string, metre: Metre, sounds: number | undefined): Spelled {
   try {
     const values = parseRhythm(text);
     const spelled = spellLine(values, metre);
@@ -28,7 +28,7 @@ function spell(text: string, metre: Metre, sounds: number): Spelled {
           {
             id: 'rhythm',
             name: '',
-            sounds: Math.max(sounds, ...values.map(({ sound }) => sound ?? 1)),
+            sounds: sounds ?? values.reduce((most, { sound }) => Math.max(most, sound ?? 1), 1),
             measures: spelled,
             values,
             sources: values.map((value) => (value.rest ? null : { statement: 'subject', origin: attack++ })),
@@ -45,7 +45,7 @@ function spell(text: string, metre: Metre, sounds: number): Spelled {
 /** A rhythm text as one staff. Nothing is drawn where it cannot be read; where it cannot be written, the reason is. */
 export function RhythmStaff({ text, metre, instrument }: { text: string; metre: Metre; instrument?: string }) {
   const { state } = useStudy();
-  const sounds = state.study.instruments.find(({ id }) => id === instrument)?.sounds ?? 1;
+  const sounds = state.study.instruments.find(({ id }) => id === instrument)?.sounds;
   const spelled = useMemo(() => spell(text, metre, sounds), [text, metre, sounds]);
   if (spelled === null) return null;
   if ('error' in spelled) return <p className="mt-2 text-[14px] text-mark">{spelled.error}</p>;

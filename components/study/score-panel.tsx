@@ -60,7 +60,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
         .map(({ instrument, measures: own, values, sources }) => ({
           id: instrument.id,
           name: instrument.name,
-          sounds: Math.max(instrument.sounds ?? 1, ...values.map(({ sound }) => sound ?? 1)),
+          sounds: instrument.sounds ?? values.reduce((most, { sound }) => Math.max(most, sound ?? 1), 1),
           measures: own,
           values,
           sources: sources.map((source) =>
@@ -162,7 +162,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
         ref={scroller}
         tabIndex={0}
         role="region"
-        aria-label="Score. The statements are described in the table below."
+        aria-label="Staves. The statements are described in words below."
         onClick={onClick}
         className="relative max-h-[78vh] overflow-y-auto overflow-x-hidden border-y border-hair py-3"
       >

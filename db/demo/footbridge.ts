@@ -16,7 +16,7 @@ export const footbridge: StudyInput = {
   instruments: [
     { id: 'tom-toms', name: 'Tom-toms', family: 'skin', sound: 'tom-toms', sounds: 4 },
     { id: 'claves', name: 'Claves', family: 'wood', sound: 'claves' },
-    { id: 'cowbell', name: 'Cowbell', family: 'metal', sound: 'cowbell' },
+    { id: 'cowbell', name: 'Cowbell', family: 'metal', sound: 'cowbell', sounds: 1 },
     { id: 'pipes', name: 'Pipes', family: 'found', sound: 'pipes', sounds: 3 },
   ],
   players: [
