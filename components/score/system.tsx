@@ -1,6 +1,7 @@
 'use client';
 
 import { type ReactNode, type RefObject, useEffect, useRef, useState } from 'react';
+import { SYSTEM_MARK } from '@/lib/client/study-editor';
 import { type SystemDrawing, drawSystem, loadVexFlow } from './draw';
 import { SYSTEM_TOP } from './layout';
 import type { DrawnScore, SystemSpec } from './spec';
@@ -64,7 +65,7 @@ export function System({
       const made = drawSystem(vexflow, element, latest.current.score, latest.current.spec);
       setDrawing(made);
       latest.current.onDrawn?.(made, element);
-      performance.mark('sesqui:system-drawn');
+      performance.mark(SYSTEM_MARK);
     });
     return () => {
       isCurrent = false;

@@ -21,6 +21,12 @@ export type StudyContextValue = {
   readonly place: Place;
 };
 
+/** The subject that the chosen statement states, else the first that the chosen section does; null for an episode. */
+export function subjectOf({ built }: Pick<EditorSnapshot, 'built'>, { section, statement }: Selection): string | null {
+  const chosen = built.statements.find(({ id }) => id === statement);
+  return chosen ? chosen.subject : (built.statements.find((s) => s.section === section && s.subject !== null)?.subject ?? null);
+}
+
 export const StudyContext = createContext<StudyContextValue | null>(null);
 
 export function useStudy(): StudyContextValue {

@@ -69,13 +69,19 @@ function Word({ part, section }: { part: SentencePart; section: Section }) {
   );
 }
 
+/** A word keeps its key, and so its open control, while the sentence about it grows or shrinks. */
+function keyOf(section: Section, { control }: SentencePart, index: number): string {
+  if (control === undefined) return `${section.id} text ${index}`;
+  return `${section.id} ${control.kind}${control.kind === 'instrument' ? ` ${control.index}` : ''}`;
+}
+
 /** The sentence of a section, its words the controls. */
 export function ProcessSentence({ section }: { section: Section }) {
   const { state } = useStudy();
   return (
     <p data-testid="process-sentence" className="max-w-[46ch] font-serif text-[22px] leading-[1.62] sm:text-[25px]">
       {sectionSentence(state.study, section).map((part, index) => (
-        <Word key={`${section.id}-${index}-${part.control?.kind ?? 'text'}`} part={part} section={section} />
+        <Word key={keyOf(section, part, index)} part={part} section={section} />
       ))}
     </p>
   );

@@ -5,7 +5,7 @@ import { measureAt, metreOf, scoreOf } from '@/engine';
 import { ScoreLines } from '../score/score-lines';
 import type { SystemDrawing } from '../score/draw';
 import type { DrawnScore, SystemSpec } from '../score/spec';
-import { useStudy } from './context';
+import { subjectOf, useStudy } from './context';
 
 /** The x of a position within a system, between the two drawn places about it. */
 function xAt({ places }: SystemDrawing, position: number): number {
@@ -76,7 +76,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
   const chosen = built.statements.find(({ id }) => id === selection.statement);
   const target = chosen ?? built.sections.find(({ id }) => id === section.id)!;
   const targetMeasure = measureAt(measures, target.start)?.index ?? 0;
-  const subject = chosen?.subject ?? built.statements.find((s) => s.section === section.id && s.subject !== null)?.subject ?? null;
+  const subject = subjectOf(state, selection);
 
   const light = useCallback(
     (host: HTMLElement) => {

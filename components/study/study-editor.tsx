@@ -3,9 +3,9 @@
 import Link from 'next/link';
 import { useEffect, useMemo, useState, useSyncExternalStore } from 'react';
 import { describeSection } from '@/engine';
-import type { StudyEditor as Editor } from '@/lib/client/study-editor';
+import { DRAWN_MARK, type StudyEditor as Editor } from '@/lib/client/study-editor';
 import { TextButton } from '../ui/button';
-import { type Selection, StudyContext, type StudyContextValue } from './context';
+import { type Selection, StudyContext, type StudyContextValue, subjectOf } from './context';
 import { FormStrip } from './form-strip';
 import { InstrumentsPanel } from './instruments-panel';
 import { ScorePanel } from './score-panel';
@@ -84,7 +84,6 @@ function KeptLine({ editor, onThrowAway }: { editor: Editor; onThrowAway: () => 
 export function StudyEditorView({ editor, onThrowAway }: { editor: Editor; onThrowAway: () => void }) {
   const state = useSyncExternalStore(editor.subscribe, editor.getSnapshot, editor.getSnapshot);
   const [chosen, setChosen] = useState<Selection>({ section: state.study.sections[0]!.id, statement: null, origin: null });
-  const { player, place, playing } = usePlayer(state);
   useHistoryKeys(editor);
   useFlush(editor);
 
@@ -94,6 +93,9 @@ export function StudyEditorView({ editor, onThrowAway }: { editor: Editor; onThr
     const statement = state.built.statements.some((s) => s.id === chosen.statement && s.section === section) ? chosen.statement : null;
     return { ...chosen, section, statement };
   }, [state, chosen]);
+
+  const subject = subjectOf(state, selection);
+  const { player, place, playing } = usePlayer(state, subject === null || selection.origin === null ? null : { subject, origin: selection.origin });
 
   const value = useMemo<StudyContextValue>(
     () => ({
@@ -112,7 +114,7 @@ export function StudyEditorView({ editor, onThrowAway }: { editor: Editor; onThr
   );
 
   useEffect(() => {
-    performance.mark('sesqui:study-drawn');
+    performance.mark(DRAWN_MARK);
   }, [state]);
 
   const onSeek = (position: number) => {

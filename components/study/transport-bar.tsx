@@ -1,13 +1,18 @@
 'use client';
 
 import { useEffect, useRef, useState, useSyncExternalStore } from 'react';
-import { type Fraction, clockOf, formatClock, measureAt, tempoOf, tempoWords } from '@/engine';
-import { Fraction as F } from '@/engine';
+import { Fraction, type Statement, clockOf, formatClock, measureAt, tempoOf, tempoWords, totalLength } from '@/engine';
 import type { PlayOptions, PlayerState, StudyPlayer } from '@/lib/client/player';
 import { PLAYER } from '@/lib/client/player';
 import { Button } from '../ui/button';
 import { useStudy } from './context';
 import { HearingCaution } from './hearing';
+
+/** Where an attack of the subject comes in a statement, in whole notes from the study's start. */
+function attackStart({ rhythm, origins, start }: Statement, origin: number): Fraction | null {
+  const value = origins.indexOf(origin);
+  return value === -1 ? null : start.add(totalLength(rhythm.slice(0, value)));
+}
 
 const SPEEDS = [1, 0.75, 0.5, 0.25] as const;
 const READ_KEY = 'sesqui.hearing-read';
@@ -80,8 +85,12 @@ export function TransportBar({ player, playing }: { player: StudyPlayer; playing
   const fill = useRef<HTMLDivElement>(null);
 
   const section = built.sections.find(({ id }) => id === selection.section)!;
-  const chosen = built.statements.find(({ id }) => id === selection.statement) ?? section;
+  const statement = built.statements.find(({ id }) => id === selection.statement);
+  const chosen = statement ?? section;
   const seconds = (position: Fraction) => clock.secondsAt(position);
+  // From here is from the chosen attack where one is chosen, else from the start of the statement or section.
+  const attack = statement && selection.origin !== null ? attackStart(statement, selection.origin) : null;
+  const here = seconds(attack ?? chosen.start);
   const choice: PlayOptions = { from: seconds(chosen.start), to: seconds(chosen.start.add(chosen.length)), loop: true };
   const total = clock.total.valueOf();
 
@@ -91,7 +100,7 @@ export function TransportBar({ player, playing }: { player: StudyPlayer; playing
         const at = position ?? 0;
         const measure = measures.findLast((one) => one.start.valueOf() <= at + 1e-9);
         const time = place.secondsAt(at);
-        const words = `measure ${measure?.number ?? 1} · ${formatClock(new F(Math.round(time * 1000), 1000))}`;
+        const words = `measure ${measure?.number ?? 1} · ${formatClock(new Fraction(Math.round(time * 1000), 1000))}`;
         if (now.current && now.current.textContent !== words) now.current.textContent = words;
         if (slider.current && document.activeElement !== slider.current) slider.current.value = String(measure?.index ?? 0);
         if (fill.current) fill.current.style.left = `${total === 0 ? 0 : (100 * time) / total}%`;
@@ -187,7 +196,7 @@ export function TransportBar({ player, playing }: { player: StudyPlayer; playing
         <button type="button" className={BAR_BUTTON} onClick={() => player.stop()} disabled={playing.status === 'stopped'}>
           Stop
         </button>
-        <button type="button" className={BAR_BUTTON} onClick={() => play({ from: seconds(chosen.start) })}>
+        <button type="button" className={BAR_BUTTON} onClick={() => play({ from: here })}>
           From here
         </button>
         <button type="button" className={`${BAR_BUTTON} aria-pressed:bg-paper aria-pressed:text-ink`} aria-pressed={isLoop} onClick={toggleLoop}>

@@ -58,6 +58,9 @@ export function spellLine(rhythm: Rhythm, plan: MetrePlan): NotationMeasure[] {
   throw new SpellingError(measure, value, rhythm[value]!.length, nearest);
 }
 
+/** Whether a line can be spelled: the same question without the search for what else could. @throws EngineError as `spellLine`, but for `unspellable` */
+export const canSpell = (rhythm: Rhythm, plan: MetrePlan): boolean => 'measures' in trySpelling(rhythm, readPlan(plan));
+
 type Spelling = { readonly measures: NotationMeasure[] } | { readonly measure: number; readonly value: number };
 
 function trySpelling(rhythm: Rhythm, changes: readonly Change[]): Spelling {

@@ -1,6 +1,9 @@
 import { EngineError } from '../errors';
-import { spellLine } from '../notation/spell-line';
-import type { NotationMeasure } from '../notation/types';
+import { formatFraction } from '../exact/fraction';
+import { nearestFactors } from '../notation/nearest';
+import { canSpell, spellLine } from '../notation/spell-line';
+import { SpellingError } from '../notation/spelling-error';
+import type { MetrePlan, NotationMeasure } from '../notation/types';
 import type { Rhythm } from '../rhythm/types';
 import { type LineSource, assembleLine, statementsOf } from '../study/line';
 import type { Instrument, Study } from '../study/schema';
@@ -21,29 +24,37 @@ export type Staff = {
 
 export type Score = { readonly measures: readonly PlannedMeasure[]; readonly staves: readonly Staff[] };
 
-/** A refusal to spell, told in terms of the statement it happens in. */
-function explain(study: Study, sources: readonly LineSource[], error: EngineError): EngineError {
-  const { value, nearest } = error as EngineError & { value?: number; nearest?: readonly { toString(): string }[] };
-  const source = value === undefined ? null : sources[value];
-  if (!source || nearest === undefined) return error;
-  const section = study.sections.find(({ id }) => id === source.statement.section);
-  const told = new EngineError(error.code, `“${section?.name}”, statement ${source.statement.index + 1}: ${error.message}`, {
-    section: source.statement.section,
-  });
-  return told;
+/** A refusal to spell, told of the statement it happens in, with the factors near its own that can be written there. */
+function explain(study: Study, measures: readonly PlannedMeasure[], plan: MetrePlan, sources: readonly LineSource[], error: EngineError): EngineError {
+  const source = error instanceof SpellingError ? sources[error.value] : null;
+  if (!(error instanceof SpellingError) || !source) return error;
+  const { statement } = source;
+  const section = study.sections.find(({ id }) => id === statement.section)!;
+  const lead: Rhythm = statement.start.n === 0n ? [] : [{ length: statement.start, rest: true }];
+  const stretches = nearestFactors(statement.rhythm, (stretched) => canSpell([...lead, ...stretched], plan));
+  const factors = stretches.map((stretch) => formatFraction(statement.factor.mul(stretch)));
+  const length = formatFraction(statement.rhythm[source.value]!.length);
+  const what = statement.subject === null ? 'Line' : `At ${formatFraction(statement.factor)} times its length, statement`;
+  const offer = factors.length === 0 ? '' : statement.subject === null ? ` Stretched ${stretches.map(formatFraction).join(' or ')} times, it could.` : ` Factors near it that can: ${factors.join(', ')}.`;
+  return new EngineError(
+    error.code,
+    `${what} ${statement.index + 1} of “${section.name}” cannot be written with ties and one tuplet: see measure ${measures[error.measure]?.number ?? error.measure + 1}, where a value lasts ${length}.${offer}`,
+    { section: section.id },
+  );
 }
 
 /** The whole score: every instrument's line, spelled in the study's metres, with the way back to its statements. */
 export function scoreOf(study: Study, built: BuiltStudy): Score {
   const plan = metrePlan(study, built);
+  const measures = planMeasures(study, built);
   const staves = study.instruments.map((instrument): Staff => {
     const { values, sources } = assembleLine(statementsOf(built.statements, instrument.id), built.totalLength);
     try {
       return { instrument, measures: spellLine(values, plan), values, sources };
     } catch (error) {
       if (!(error instanceof EngineError)) throw error;
-      return { instrument, measures: [], values, sources, error: explain(study, sources, error) };
+      return { instrument, measures: [], values, sources, error: explain(study, measures, plan, sources, error) };
     }
   });
-  return { measures: planMeasures(study, built), staves };
+  return { measures, staves };
 }

@@ -29,6 +29,11 @@ export function derive(document: StudyInput): Derived {
   return describeContext(study, buildStudy(study));
 }
 
+/** Marks of the browser's own timeline: a change begins, the study is drawn, a system of the score is drawn. */
+export const CHANGE_MARK = 'sesqui:change';
+export const DRAWN_MARK = 'sesqui:drawn';
+export const SYSTEM_MARK = 'sesqui:system';
+
 const HISTORY = 500;
 const KEEP_AFTER_MS = 200;
 
@@ -70,6 +75,8 @@ export class StudyEditor {
 
   /** Changes the document. @returns the engine's error where the change is refused, else null */
   edit(change: (study: Study) => StudyInput): EngineError | null {
+    performance.clearMarks(CHANGE_MARK);
+    performance.mark(CHANGE_MARK);
     try {
       const next = derive(change(this.current.study));
       this.past = [...this.past.slice(-HISTORY), this.current.study];

@@ -1,5 +1,5 @@
 import { expect, test } from '../helpers/browser';
-import { openStudy, sentence, setWord } from './open';
+import { alert, openStudy, sentence, setWord } from './open';
 
 /** Typed into the word “Factors”: what is said, and that nothing changes. */
 const FACTORS: readonly (readonly [text: string, says: RegExp])[] = [
@@ -26,7 +26,7 @@ for (const [text, says] of FACTORS) {
 test('400 statements are refused, 256 are the limit', async ({ page }) => {
   await openStudy(page);
   await setWord(page, 'Number of statements', '400');
-  await expect(page.getByRole('alert')).toContainText('from 1 to 256 statements');
+  await expect(alert(page)).toContainText('from 1 to 256 statements');
   await expect(sentence(page)).toContainText('is stated 4 times');
 });
 
@@ -44,8 +44,8 @@ for (const [text, says, marked] of SUBJECTS) {
     await openStudy(page);
     const field = page.getByRole('textbox', { name: /^Lengths in whole notes/ });
     await field.fill(text);
-    await expect(page.getByRole('alert')).toContainText(says);
-    await expect(page.getByRole('alert').locator('mark')).toContainText(marked);
+    await expect(alert(page)).toContainText(says);
+    await expect(alert(page).locator('mark')).toContainText(marked);
     await expect(field).toHaveValue(text);
     await expect(page.getByTestId('facts')).toContainText('77 measures');
   });
@@ -83,7 +83,7 @@ test('two statements at once on one instrument are refused by name', async ({ pa
   await page.keyboard.press('Escape');
   await sentence(page).getByRole('button', { name: /^Entries: / }).click();
   await page.getByRole('radio', { name: 'all beginning together' }).click();
-  await expect(page.getByRole('alert')).toContainText('Crotales would have to play two things at once: statement 1 of “Filling” and statement 2 of “Filling”');
+  await expect(alert(page)).toContainText('Crotales would have to play two things at once: statement 1 of “Filling” and statement 2 of “Filling”');
   await expect(sentence(page)).toContainText('one after another');
 });
 
@@ -102,7 +102,7 @@ for (const [name, change] of DOCUMENTS) {
     await page.goto('/');
     await page.evaluate((text) => localStorage.setItem('sesqui.draft.lock-gates', text), kept);
     await page.goto('/studies/lock-gates');
-    await expect(page.getByRole('alert').filter({ hasText: 'Nothing was deleted' })).toBeVisible();
+    await expect(alert(page).filter({ hasText: 'Nothing was deleted' })).toBeVisible();
     await expect(page.getByRole('textbox')).toHaveValue(kept);
     expect(await page.evaluate(() => localStorage.getItem('sesqui.draft.lock-gates'))).toBe(kept);
     await page.getByRole('button', { name: /Throw it away/ }).click();

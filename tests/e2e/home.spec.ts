@@ -1,4 +1,5 @@
 import { expect, test } from '../helpers/browser';
+import { alert } from './open';
 
 test('says what it does, and its example changes and plays', async ({ page }) => {
   await page.goto('/');
@@ -34,7 +35,7 @@ test('signs in with an account of this test machine, and refuses a wrong passwor
   await page.getByRole('textbox', { name: 'E-mail' }).fill('composer@sesqui.example');
   await page.getByLabel('Password').fill('not-the-password');
   await page.getByRole('button', { name: 'Sign in' }).click();
-  await expect(page.getByRole('alert').filter({ hasText: 'do not go together' })).toBeVisible();
+  await expect(alert(page).filter({ hasText: 'do not go together' })).toBeVisible();
   // The refusal is answered with 401, which the browser reports.
   complaints.length = 0;
 });

@@ -23,9 +23,12 @@ export async function setWord(page: Page, label: string, text: string): Promise<
 
 /** Waits until the first systems of the score are drawn, and gives the drawing. */
 export async function drawnScore(page: Page) {
-  const systems = page.getByRole('region', { name: /^Score/ }).getByTestId('system');
+  const systems = page.getByRole('region', { name: /^Staves/ }).getByTestId('system');
   await systems.first().scrollIntoViewIfNeeded();
   await expect(systems.first().locator('svg').first()).toBeVisible();
   await expect(systems.first().locator('.vf-stavenote').first()).toBeAttached();
   return systems;
 }
+
+/** What the page says is wrong; the framework's own announcer of routes is not meant. */
+export const alert = (page: Page) => page.locator('[role="alert"]:not(#__next-route-announcer__)');

@@ -8,7 +8,7 @@ test.beforeEach(async ({ page }) => {
 test('plays from the choice; the place moves on strip, threads and staff; stop brings it back', async ({ page }) => {
   await openStudy(page);
   await drawnScore(page);
-  await page.getByRole('region', { name: 'Form' }).getByRole('button', { name: /Statement 2 of 4/ }).click();
+  await page.getByRole('region', { name: 'Form' }).getByRole('button', { name: /^Statement 2 of 4, temple blocks/ }).click();
   await page.getByRole('button', { name: 'From here' }).click();
   await expect(page.getByRole('button', { name: 'Pause' })).toBeVisible();
   await expect(page.getByTestId('now')).toHaveText(/^measure [5-6] · 0′1[1-9]″$/);

@@ -1,5 +1,5 @@
 import { expect, test } from '../helpers/browser';
-import { drawnScore, openStudy, sentence, setWord, word } from './open';
+import { alert, drawnScore, openStudy, sentence, setWord, word } from './open';
 
 test('opens the demo from the database: title, totals with their sums, clock, mirrors', async ({ page }) => {
   await openStudy(page);
@@ -88,7 +88,7 @@ test('threads have three readings; an attack lights everywhere', async ({ page }
 
 test('choosing a statement on the strip moves the rest to it', async ({ page }) => {
   await openStudy(page);
-  const score = page.getByRole('region', { name: /^Score/ });
+  const score = page.getByRole('region', { name: /^Staves/ });
   await page.getByRole('region', { name: 'Form' }).getByRole('button', { name: /^Emptying\./ }).click();
   await expect(page.getByRole('heading', { name: 'How “Emptying” is made' })).toBeVisible();
   await expect(sentence(page)).toHaveText('“Filling” is played from its end, its values reversed.');
@@ -111,7 +111,7 @@ test('a mirror is chosen by its word, and a ring of mirrors is refused', async (
   await page.getByRole('region', { name: 'Form' }).getByRole('button', { name: /^Sluice, reversed\./ }).click();
   await word(page, 'Section that is mirrored').click();
   await page.getByRole('radio', { name: 'Emptying' }).click();
-  await expect(page.getByRole('alert')).toContainText('mirror one another in a ring');
+  await expect(alert(page)).toContainText('mirror one another in a ring');
   await expect(sentence(page)).toContainText('“Sluice” is played from its end');
 });
 
@@ -122,14 +122,14 @@ test('the subject: text and staff, errors at their place, nothing lost', async (
   const notes = page.getByTestId('rhythm-staff').locator('.vf-stavenote');
   await expect(notes.first()).toBeAttached();
   await field.fill('1/4 1/8 1/0 1/8');
-  await expect(page.getByRole('alert')).toContainText('divides by zero');
-  await expect(page.getByRole('alert').locator('mark')).toHaveText('1/0');
+  await expect(alert(page)).toContainText('divides by zero');
+  await expect(alert(page).locator('mark')).toHaveText('1/0');
   await expect(field).toHaveValue('1/4 1/8 1/0 1/8');
   await expect(page.getByTestId('facts')).toContainText('77 measures');
   await page.reload();
   await expect(field).toHaveValue('1/4 1/8 1/0 1/8');
   await field.fill('1/2 1/4 1/4 | 1 | 1/2 (1/2)');
-  await expect(page.getByRole('alert')).toHaveCount(0);
+  await expect(alert(page)).toHaveCount(0);
   await expect(page.getByTestId('section-sum')).toContainText('= 17 1/4 measures');
   await expect(notes).toHaveCount(6);
   expect(before).not.toBe(await field.inputValue());
@@ -173,6 +173,6 @@ test('a new study is begun, filled and kept without an account', async ({ page }
 
 test('an unknown study says so', async ({ page, complaints }) => {
   await page.goto('/studies/no-such-study');
-  await expect(page.getByRole('alert').filter({ hasText: /stud/ })).toBeVisible();
+  await expect(alert(page).filter({ hasText: /stud/ })).toBeVisible();
   complaints.length = 0;
 });
