@@ -1,21 +1,35 @@
 import type { BeamMark, NotationSymbol } from './types';
 import { BEAM_LEVELS } from './written';
 
-/** A symbol with the beam group that it falls in; symbols of different groups are not beamed together. */
-export type Beamable = { readonly symbol: Omit<NotationSymbol, 'beams'>; readonly group: number };
+/** A symbol with its place; symbols of different groups are not beamed together. */
+export type Beamable = {
+  readonly symbol: Pick<NotationSymbol, 'base' | 'rest' | 'tuplets'>;
+  readonly group: number;
+  /** where it begins, in integers of its measure or bracket */
+  readonly at: number;
+  /** integers of one written whole note there */
+  readonly whole: number;
+};
 
-function marksOf(levels: readonly number[], index: number): BeamMark[] {
-  const own = levels[index]!;
-  const before = levels[index - 1] ?? 0;
-  const after = levels[index + 1] ?? 0;
-  return Array.from({ length: own }, (_, n): BeamMark => {
+/** A part of a beam points to the side with which its symbol makes up the next longer value. */
+function hook({ at, whole }: Beamable, level: number, isFirst: boolean, isLast: boolean): BeamMark {
+  if (isFirst || isLast) return isFirst ? 'forward hook' : 'backward hook';
+  return at % (whole / 2 ** (level + 1)) === 0 ? 'forward hook' : 'backward hook';
+}
+
+function marksOf(group: readonly Beamable[], index: number): BeamMark[] {
+  const levelsOf = (n: number): number => {
+    const one = group[n];
+    return one === undefined ? 0 : BEAM_LEVELS[one.symbol.base];
+  };
+  return Array.from({ length: levelsOf(index) }, (_, n): BeamMark => {
     const level = n + 1;
-    const left = before >= level;
-    const right = after >= level;
+    const left = levelsOf(index - 1) >= level;
+    const right = levelsOf(index + 1) >= level;
     if (left && right) return 'continue';
     if (left) return 'end';
     if (right) return 'begin';
-    return index === 0 ? 'forward hook' : 'backward hook';
+    return hook(group[index]!, level, index === 0, index === group.length - 1);
   });
 }
 
@@ -28,8 +42,8 @@ export function beamsOf(items: readonly Beamable[]): BeamMark[][] {
   let from = 0;
   const close = (to: number) => {
     if (to - from > 1) {
-      const levels = items.slice(from, to).map(({ symbol }) => BEAM_LEVELS[symbol.base]);
-      for (let index = from; index < to; index += 1) result[index] = marksOf(levels, index - from);
+      const group = items.slice(from, to);
+      for (let index = from; index < to; index += 1) result[index] = marksOf(group, index - from);
     }
     from = to;
   };

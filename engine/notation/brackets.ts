@@ -12,8 +12,14 @@ const COMPOUND: readonly (readonly [number, number])[] = [[5, 3], [7, 6]];
 
 const isPowerOfTwo = (n: number): boolean => n > 0 && Number.isInteger(Math.log2(n));
 
-/** What a choice of brackets costs; small is legible. Weights are a setting of ours. */
-const COST = { symbol: 4, bracket: 7, cutValue: 4, wider: 1 } as const;
+/**
+ * What a choice of brackets costs; small is legible. Weights are a setting of ours: few symbols and ties, brackets of one
+ * beat where they cut nothing, values that begin on a bracket's units.
+ */
+const COST = { symbol: 4, tie: 2, bracket: 2, underBeat: 1, perBeatThree: 4, perBeatOther: 5, acrossParts: 2, offUnit: 3, halfUnit: 2 } as const;
+
+/** How many symbols a stretch needs, and how many ties lead to one of them. */
+export type Weight = { readonly symbols: number; readonly ties: number };
 
 export type BracketPlan = { readonly cost: number; readonly brackets: readonly Bracket[] };
 
@@ -27,9 +33,10 @@ export type BracketFinder = {
 
 /**
  * @param whole - integers of one whole note
- * @param spell - number of symbols that the content of a bracket needs
+ * @param beat - integers of one beat
+ * @param weigh - what spelling a bracket, or a node without one, takes
  */
-export function bracketsOn(whole: number, spell: (bracket: Bracket) => number): BracketFinder {
+export function bracketsOn(whole: number, beat: number, weigh: (span: Bracket | MetreNode) => Weight): BracketFinder {
   const least = whole / 256;
   const isPlain = (edge: number): boolean => edge % least === 0;
 
@@ -47,6 +54,19 @@ export function bracketsOn(whole: number, spell: (bracket: Bracket) => number): 
     return [];
   }
 
+  const costOf = ({ symbols, ties }: Weight): number => COST.symbol * symbols + COST.tie * ties;
+
+  function shapeCost({ start, end, actual }: Bracket, inner: readonly number[]): number {
+    const span = end - start;
+    const width = span < beat ? COST.underBeat : Math.floor(((span - beat) * (actual === 3 ? COST.perBeatThree : COST.perBeatOther)) / beat);
+    const between = inner.map((edge) => {
+      const units = (edge - start) * actual;
+      if (units % span === 0) return 0;
+      return (2 * units) % span === 0 ? COST.halfUnit : COST.offUnit;
+    });
+    return between.reduce((a: number, b) => a + b, COST.bracket + width);
+  }
+
   function overSpan(start: number, end: number, edges: readonly number[]): BracketPlan | null {
     const span = end - start;
     const inner = edges.filter((edge) => edge > start && edge < end);
@@ -54,19 +74,19 @@ export function bracketsOn(whole: number, spell: (bracket: Bracket) => number): 
     for (const [actual, normal] of ratiosFor(span)) {
       const bracket = { start, end, actual, normal };
       if (!fits(bracket, inner)) continue;
-      const unit = span / actual;
       // Two ways to write thirds: six units only where all six are attacked and nothing finer is.
-      const isSixths = actual === 6 && inner.length === 5 && inner.every((edge) => Number.isInteger((edge - start) / unit));
-      const cost =
-        COST.bracket +
-        COST.symbol * spell(bracket) +
-        (edges.includes(end) ? 0 : COST.cutValue) +
-        Math.round((COST.wider * span * 8) / whole) +
-        (actual === 6 && !isSixths ? 2 : 0) -
-        (isSixths ? 1 : 0);
+      if (actual === 6 && !(inner.length === 5 && inner.every((edge) => ((edge - start) * actual) % span === 0))) continue;
+      const cost = shapeCost(bracket, inner) + costOf(weigh(bracket));
       if (best === null || cost < best.cost) best = { cost, brackets: [bracket] };
     }
     return best;
+  }
+
+  /** Two neighbours of three or more under one bracket; not in sixths, which show their parts. */
+  function overTwo(before: MetreNode, part: MetreNode, edges: readonly number[]): BracketPlan | null {
+    if (edges.every((edge) => edge <= before.start || edge >= part.end || isPlain(edge))) return null;
+    const plan = overSpan(before.start, part.end, edges);
+    return plan === null || plan.brackets[0]!.actual === 6 ? null : { ...plan, cost: plan.cost + COST.acrossParts };
   }
 
   const cheaper = (a: BracketPlan | null, b: BracketPlan | null): BracketPlan | null => (a === null ? b : b === null || a.cost <= b.cost ? a : b);
@@ -75,7 +95,7 @@ export function bracketsOn(whole: number, spell: (bracket: Bracket) => number): 
 
   function find(node: MetreNode, edges: readonly number[]): BracketPlan | null {
     const inner = edges.filter((edge) => edge > node.start && edge < node.end);
-    if (inner.every(isPlain)) return { cost: COST.symbol * edges.filter((edge) => edge >= node.start && edge < node.end).length, brackets: [] };
+    if (inner.every(isPlain)) return { cost: costOf(weigh(node)), brackets: [] };
     let best = overSpan(node.start, node.end, edges);
     if (node.parts.length > 0) {
       // Parts one by one, or two neighbours under one bracket.
@@ -83,7 +103,7 @@ export function bracketsOn(whole: number, spell: (bracket: Bracket) => number): 
       node.parts.forEach((part, index) => {
         let plan = together(plans[index]!, find(part, edges));
         const before = node.parts[index - 1];
-        if (before && node.parts.length > 2 && node.kind !== 'groups') plan = cheaper(plan, together(plans[index - 1]!, overSpan(before.start, part.end, edges)));
+        if (before && node.parts.length > 2 && node.kind !== 'groups') plan = cheaper(plan, together(plans[index - 1]!, overTwo(before, part, edges)));
         plans.push(plan);
       });
       best = cheaper(best, plans.at(-1)!);

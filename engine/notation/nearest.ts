@@ -1,3 +1,4 @@
+import { EngineError } from '../errors';
 import { Fraction } from '../exact/fraction';
 import type { Rhythm } from '../rhythm/types';
 import { augment } from '../transform/augment';
@@ -27,9 +28,18 @@ function candidates(): Fraction[] {
  */
 export function nearestFactors(rhythm: Rhythm, canSpell: (stretched: Rhythm) => boolean): Fraction[] {
   const found: Fraction[] = [];
+  const glance = rhythm.slice(0, GLANCE);
+  const tries = (values: Rhythm, factor: Fraction): boolean => {
+    try {
+      return canSpell(augment(values, factor));
+    } catch (error) {
+      // Stretched, it passes another limit: not an offer.
+      if (error instanceof EngineError) return false;
+      throw error;
+    }
+  };
   for (const factor of candidates()) {
-    const isGood = canSpell(augment(rhythm.slice(0, GLANCE), factor)) && (rhythm.length <= GLANCE || canSpell(augment(rhythm, factor)));
-    if (isGood) found.push(factor);
+    if (tries(glance, factor) && (rhythm.length <= GLANCE || tries(rhythm, factor))) found.push(factor);
     if (found.length === WANTED) break;
   }
   return found;

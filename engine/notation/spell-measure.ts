@@ -1,8 +1,10 @@
 import { LIMITS } from '../limits';
-import { type Beamable, beamsOf } from './beams';
-import { type Bracket, bracketsOn } from './brackets';
-import { type Piece, type Splitter, splitterOn } from './split';
-import { type MetreNode, innerNode, treesOn, unitNodes } from './tree';
+import { parseMetre } from '../rhythm/metre';
+import { bracketTree } from './bracket-tree';
+import { beamsOf } from './beams';
+import { type Bracket, type BracketPlan, type Weight, bracketsOn } from './brackets';
+import { type Part, type Piece, type Splitter, splitterOn } from './split';
+import { type MetreNode, treesOn } from './tree';
 import type { NotationSymbol, TupletMark } from './types';
 import { writtenOn } from './written';
 
@@ -16,30 +18,20 @@ export type SpelledSymbol = {
 
 /**
  * Spells one measure. `ends` are the ends of its pieces in ticks from its start, `rests` whether each is a rest.
- * @returns the symbols, or the index of the first piece that cannot be written
+ * @returns the symbols, or the index of the first piece whose end cannot be written
  */
 export type MeasureSpeller = (metre: string, ends: readonly number[], rests: readonly boolean[]) => readonly SpelledSymbol[] | number;
 
-type Draft = { readonly start: number; readonly piece: number; readonly base: NotationSymbol['base']; readonly dots: number; readonly rest: boolean; readonly tuplets: readonly TupletMark[] };
+type Draft = {
+  readonly piece: number;
+  /** what `Beamable` says of place, and where the place is within its piece */
+  readonly at: number;
+  readonly whole: number;
+  readonly group: number;
+  readonly symbol: Pick<NotationSymbol, 'base' | 'dots' | 'rest' | 'tuplets'>;
+};
 
-/** The tree of what a bracket holds: its units, in its own coordinates, where positions are multiplied by `actual`. */
-function bracketTree({ start, end, actual, normal }: Bracket, whole: number): MetreNode {
-  const span = end - start;
-  const least = (whole * normal) / LIMITS.shortestSymbol;
-  // Written units shorter than a quarter are beamed as one group, longer ones each for itself.
-  const isShort = span * 4 < whole * normal;
-  if (actual === 6 || actual === 9) {
-    const size = actual === 6 ? 2 : 3;
-    const thirds = Array.from({ length: 3 }, (_, n): MetreNode => {
-      const at = n * size * span;
-      return size === 2
-        ? innerNode(at, at + 2 * span, least, !isShort)
-        : { kind: 'units', start: at, end: at + 3 * span, parts: unitNodes(at, span, 3, least, false), dottedRest: true, beamed: !isShort };
-    });
-    return { kind: 'units', start: 0, end: actual * span, parts: thirds, dottedRest: false, beamed: isShort };
-  }
-  return { kind: 'units', start: 0, end: actual * span, parts: unitNodes(0, span, actual, least, !isShort), dottedRest: true, beamed: isShort };
-}
+const NO_TUPLETS: readonly TupletMark[] = [];
 
 /** The number of the beam group that a position falls in. */
 function groupAt(node: MetreNode, position: number): number {
@@ -47,88 +39,97 @@ function groupAt(node: MetreNode, position: number): number {
   return inside ? groupAt(inside, position) : node.start;
 }
 
+/** What lies in [start, end) of the pieces, cut at its edges, its positions shifted to the start and multiplied. */
+function within(pieces: readonly Piece[], start: number, end: number, shift: number, times: number): { pieces: Piece[]; first: number } {
+  const first = pieces.findIndex((piece) => piece.end > start);
+  const inside: Piece[] = [];
+  for (let index = first; index !== -1 && index < pieces.length && pieces[index]!.start < end; index += 1) {
+    const piece = pieces[index]!;
+    inside.push({ rest: piece.rest, start: (Math.max(piece.start, start) - shift) * times, end: (Math.min(piece.end, end) - shift) * times });
+  }
+  return { pieces: inside, first };
+}
+
 /** @param whole - ticks of one whole note, a multiple of 256; spelled measures are remembered by their pattern */
 export function measureSpeller(whole: number): MeasureSpeller {
-  const least = whole / LIMITS.shortestSymbol;
-  const trees = treesOn(whole, least);
-  const plain = splitterOn(writtenOn(whole));
-  const inBracket = new Map<number, Splitter>();
-  const splitterFor = (normal: number): Splitter => {
-    let splitter = inBracket.get(normal);
-    if (splitter === undefined) inBracket.set(normal, (splitter = splitterOn(writtenOn(whole * normal))));
+  const trees = treesOn(whole, whole / LIMITS.shortestSymbol);
+  const splitters = new Map<number, Splitter>();
+  /** The splitter where a written whole note counts so many integers. */
+  const splitterFor = (written: number): Splitter => {
+    let splitter = splitters.get(written);
+    if (splitter === undefined) splitters.set(written, (splitter = splitterOn(writtenOn(written))));
     return splitter;
   };
 
-  /** What lies in [start, end) of the pieces, cut at its edges. */
-  function within(pieces: readonly Piece[], start: number, end: number): { piece: Piece; index: number }[] {
-    return pieces.flatMap((piece, index) =>
-      piece.end > start && piece.start < end ? [{ piece: { ...piece, start: Math.max(piece.start, start), end: Math.min(piece.end, end) }, index }] : [],
-    );
-  }
-
-  function spellBracket(bracket: Bracket, pieces: readonly Piece[]): Draft[] {
-    const { start, actual, normal } = bracket;
-    const tree = bracketTree(bracket, whole);
-    const scaled = within(pieces, start, bracket.end).map(({ piece, index }) => ({
-      piece: { ...piece, start: (piece.start - start) * actual, end: (piece.end - start) * actual },
-      index,
-    }));
-    const drafts = scaled.flatMap(({ piece, index }, n) =>
-      splitterFor(normal)
-        .split(tree, piece, scaled[n - 1]?.piece, scaled[n + 1]?.piece)
-        .map((part) => ({ start: start + part.start / actual, piece: index, ...part.written, rest: piece.rest })),
-    );
-    return drafts.map((draft, n) => ({
-      ...draft,
-      tuplets: [{ actual, normal, ...(n === 0 ? { starts: true as const } : {}), ...(n === drafts.length - 1 ? { stops: true as const } : {}) }],
-    }));
+  function draftsOf(tree: MetreNode, written: number, pieces: readonly Piece[], first: number): Draft[] {
+    const { split } = splitterFor(written);
+    const toDraft = (piece: number, rest: boolean, { start, written: { base, dots } }: Part): Draft => ({
+      piece,
+      at: start,
+      whole: written,
+      group: groupAt(tree, start),
+      symbol: { base, dots, rest, tuplets: NO_TUPLETS },
+    });
+    return pieces.flatMap((piece, n) => split(tree, piece, pieces[n - 1], pieces[n + 1]).map((part) => toDraft(first + n, piece.rest, part)));
   }
 
   function spellPlain(tree: MetreNode, pieces: readonly Piece[], start: number, end: number): Draft[] {
-    const inside = within(pieces, start, end);
-    return inside.flatMap(({ piece, index }, n) =>
-      plain.split(tree, piece, inside[n - 1]?.piece, inside[n + 1]?.piece).map((part) => ({ start: part.start, piece: index, ...part.written, rest: piece.rest, tuplets: [] })),
-    );
+    const inside = within(pieces, start, end, 0, 1);
+    return draftsOf(tree, whole, inside.pieces, inside.first);
+  }
+
+  function spellBracket(bracket: Bracket, pieces: readonly Piece[]): Draft[] {
+    const { start, end, actual, normal } = bracket;
+    const written = whole * normal;
+    const inside = within(pieces, start, end, start, actual);
+    const drafts = draftsOf(bracketTree(bracket, whole, written / LIMITS.shortestSymbol), written, inside.pieces, inside.first);
+    return drafts.map((draft, n) => {
+      const mark = { actual, normal, ...(n === 0 ? { starts: true as const } : {}), ...(n === drafts.length - 1 ? { stops: true as const } : {}) };
+      return { ...draft, symbol: { ...draft.symbol, tuplets: [mark] } };
+    });
+  }
+
+  function findBrackets(metre: string, tree: MetreNode, pieces: readonly Piece[], ends: readonly number[]): BracketPlan | null {
+    const { groups, unit, kind } = parseMetre(metre);
+    const beat = (whole / unit) * (kind === 'simple' ? 1 : Math.min(...groups));
+    const weigh = (span: Bracket | MetreNode): Weight => {
+      const drafts = 'actual' in span ? spellBracket(span, pieces) : spellPlain(tree, pieces, span.start, span.end);
+      const tied = drafts.filter(({ symbol, piece }, n) => !symbol.rest && (n === 0 ? pieces[piece]!.start < span.start : drafts[n - 1]!.piece === piece));
+      return { symbols: drafts.length, ties: tied.length };
+    };
+    return bracketsOn(whole, beat, weigh).find(tree, [0, ...ends]);
+  }
+
+  /** The first piece without whose end, and what follows it, the measure could be written. */
+  function firstUnwritable(metre: string, tree: MetreNode, pieces: readonly Piece[]): number {
+    const fails = (count: number): boolean => {
+      const kept = pieces.slice(0, count);
+      const filled = [...kept, { start: kept.at(-1)!.end, end: tree.end, rest: true }];
+      return findBrackets(metre, tree, filled, filled.map(({ end }) => end)) === null;
+    };
+    for (let count = 1; count < pieces.length; count += 1) if (fails(count)) return count - 1;
+    return pieces.length - 1;
   }
 
   function spell(metre: string, ends: readonly number[], rests: readonly boolean[]): readonly SpelledSymbol[] | number {
     const tree = trees.of(metre);
     const pieces = ends.map((end, index): Piece => ({ start: index === 0 ? 0 : ends[index - 1]!, end, rest: rests[index]! }));
-    const odd = ends.findIndex((end) => end % least !== 0);
-    let brackets: readonly Bracket[] = [];
-    if (odd !== -1) {
-      const plan = bracketsOn(whole, (bracket) => spellBracket(bracket, pieces).length).find(tree, [0, ...ends]);
-      if (plan === null) return odd;
-      brackets = plan.brackets;
-    }
+    const plan = findBrackets(metre, tree, pieces, ends);
+    if (plan === null) return firstUnwritable(metre, tree, pieces);
     const drafts: Draft[] = [];
-    const inGroup: number[] = [];
-    const add = (more: readonly Draft[], group: (draft: Draft) => number) => {
-      for (const draft of more) {
-        drafts.push(draft);
-        inGroup.push(group(draft));
-      }
-    };
     let at = 0;
-    for (const bracket of [...brackets, null]) {
-      const to = bracket?.start ?? tree.end;
-      if (to > at) add(spellPlain(tree, pieces, at, to), ({ start }) => groupAt(tree, start));
-      if (bracket === null) break;
-      const own = bracketTree(bracket, whole);
-      add(spellBracket(bracket, pieces), ({ start }) => bracket.start + groupAt(own, (start - bracket.start) * bracket.actual) / bracket.actual);
+    for (const bracket of plan.brackets) {
+      if (bracket.start > at) drafts.push(...spellPlain(tree, pieces, at, bracket.start));
+      drafts.push(...spellBracket(bracket, pieces));
       at = bracket.end;
     }
-    return finish(drafts, inGroup);
-  }
-
-  function finish(drafts: readonly Draft[], groups: readonly number[]): SpelledSymbol[] {
-    const symbols = drafts.map(({ base, dots, rest, tuplets }) => ({ base, dots, rest, tuplets, tiedFromBefore: false, tiedOn: false, value: null }));
-    const beams = beamsOf(symbols.map((symbol, index): Beamable => ({ symbol, group: groups[index]! })));
-    return drafts.map(({ piece, base, dots, rest, tuplets }, index) => ({
+    if (at < tree.end) drafts.push(...spellPlain(tree, pieces, at, tree.end));
+    const beams = beamsOf(drafts);
+    return drafts.map(({ piece, symbol }, index) => ({
       piece,
       isFirst: drafts[index - 1]?.piece !== piece,
       isLast: drafts[index + 1]?.piece !== piece,
-      symbol: { base, dots, rest, tuplets, beams: beams[index]! },
+      symbol: { ...symbol, beams: beams[index]! },
     }));
   }
 

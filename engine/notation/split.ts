@@ -69,8 +69,11 @@ export function splitterOn(written: (length: number) => Written | undefined): Sp
 
   function isOneRest(node: MetreNode, { start, end }: Piece, dots: number): boolean {
     if (start === node.start && end === node.end) return dots === 0 || (dots === 1 && node.dottedRest);
-    // In a compound beat the first two units are one rest, the last two are not.
-    return node.kind === 'units' && dots === 0 && start === node.start && (node.dottedRest || node.parts.length > 3) && node.parts.some((part) => part.end === end);
+    // In a compound beat the first two units are one rest, the last two are not. Five or seven units of a bracket have no
+    // beats among them: their rests are as few as can be.
+    if (node.kind !== 'units' || dots > 0 || !node.parts.some((part) => part.end === end)) return false;
+    if (node.dottedRest && node.parts.length > 3) return node.parts.some((part) => part.start === start);
+    return start === node.start && (node.dottedRest || node.parts.length > 3);
   }
 
   function split(node: MetreNode, piece: Piece, before?: Piece, after?: Piece): Part[] {

@@ -46,10 +46,10 @@ export function unitNodes(start: number, unit: number, count: number, least: num
   return Array.from({ length: count }, (_, n) => innerNode(start + n * unit, start + (n + 1) * unit, least, beamed));
 }
 
-function groupNode(start: number, unit: number, count: number, least: number, isShortUnit: boolean): MetreNode {
+function groupNode(start: number, unit: number, count: number, least: number, isShortUnit: boolean, isBeat: boolean): MetreNode {
   if (count === 1) return innerNode(start, start + unit, least, true);
   const units = unitNodes(start, unit, count, least, !isShortUnit);
-  return over(count === 2 ? 'pair' : 'units', units, { beamed: isShortUnit, dottedRest: isShortUnit && count === 3 });
+  return over(count === 2 ? 'pair' : 'units', units, { beamed: isShortUnit, dottedRest: count === 3 && (isShortUnit || isBeat) });
 }
 
 /** The node of a whole measure. @param whole - integers of one whole note @param least - of the shortest symbol */
@@ -57,14 +57,15 @@ function build(metre: ParsedMetre, whole: number, least: number): MetreNode {
   const unit = whole / metre.unit;
   let at = 0;
   const groups = metre.groups.map((count) => {
-    const node = groupNode(at, unit, count, least, metre.unit >= 8);
+    const node = groupNode(at, unit, count, least, metre.unit >= 8, metre.kind === 'compound');
     at += count * unit;
     return node;
   });
   if (groups.length === 1) return groups[0]!;
   const isCompound = metre.kind === 'compound';
   const kind = metre.kind === 'simple' ? 'beats' : 'groups';
-  if (groups.length === 2) return over(kind === 'beats' ? 'pair' : 'groups', groups);
+  // The two eighths of 2/8 are beamed together, as in every metre of short units.
+  if (groups.length === 2) return over(kind === 'beats' ? 'pair' : 'groups', groups, { beamed: metre.count === 2 && metre.unit >= 8 });
   if (groups.length === 4 && metre.kind !== 'additive') {
     const half = (a: MetreNode, b: MetreNode) => over(isCompound ? 'groups' : 'pair', [a, b], { dottedRest: isCompound });
     return over('halves', [half(groups[0]!, groups[1]!), half(groups[2]!, groups[3]!)]);
