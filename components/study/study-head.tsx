@@ -49,6 +49,8 @@ export function StudyHead() {
   const metres = studyMetres(study);
   const pairs = Math.floor(study.sections.length / 2);
   const mirrors = mirrorWords(study, built);
+  const { form, values, attacks } = built.palindrome;
+  const senses = [['form', pairs > 0 && form.holds], ['values', values.holds], ['attacks', attacks.holds]] as const;
   return (
     <div className="min-w-0">
       <h1 className="text-[38px] font-[560] leading-[1.04] tracking-[-0.025em] [font-stretch:112%] sm:text-[58px]">
@@ -83,8 +85,7 @@ export function StudyHead() {
       </div>
       <details className="mt-2 max-w-[80ch] text-[14px] text-soft">
         <summary className="w-fit underline decoration-hair underline-offset-[3px]">
-          {pairs > 0 && built.palindrome.form.holds ? 'The form mirrors' : 'No mirror in the form'}
-          {`; the values ${built.palindrome.values.holds ? 'do' : 'do not'}; the attacks ${built.palindrome.attacks.holds ? 'do' : 'do not'}`}
+          {`A mirror ${senses.map(([sense, holds]) => `${holds ? '' : 'not '}in ${sense}`).join(', ')}`}
         </summary>
         <ul className="mt-1.5 grid gap-1" role="list">
           {palindromeWords(built.palindrome, pairs).map((sentence) => (

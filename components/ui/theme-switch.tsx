@@ -4,7 +4,7 @@ import { useState } from 'react';
 
 export type Theme = 'system' | 'light' | 'dark';
 const NEXT: Record<Theme, Theme> = { system: 'dark', dark: 'light', light: 'system' };
-const WORDS: Record<Theme, string> = { system: 'Light or dark: as the system', dark: 'Dark', light: 'Light' };
+const WORDS: Record<Theme, string> = { system: 'Light/dark', dark: 'Dark', light: 'Light' };
 
 /** Light, dark, or as the system has it; kept in a cookie so that the first paint is right. */
 export function ThemeSwitch({ initial }: { initial: Theme }) {
@@ -17,8 +17,8 @@ export function ThemeSwitch({ initial }: { initial: Theme }) {
     document.cookie = `theme=${next}; path=/; max-age=31536000; samesite=lax`;
   };
   return (
-    <button type="button" onClick={change} className="text-soft hover:text-ink" aria-label={`${WORDS[theme]}. Change`}>
-      {theme === 'system' ? 'Light/dark' : WORDS[theme]}
+    <button type="button" onClick={change} className="text-soft hover:text-ink" aria-label={`${WORDS[theme]}${theme === 'system' ? ', as the system' : ''}. Change`}>
+      {WORDS[theme]}
     </button>
   );
 }

@@ -4,10 +4,10 @@ import { buildStudy } from '../study/build';
 import { type Section, type Study, type StudyInput, parseStudy } from '../study/schema';
 import type { BuiltStudy, Palindrome, Statement } from '../study/types';
 import { type Clock, clockOf, formatClock, spokenClock } from '../views/clock';
-import { type PlannedMeasure, measureAt, planMeasures, tempoOf } from '../views/measures';
+import { type PlannedMeasure, measureAt, metreOf, planMeasures, tempoOf } from '../views/measures';
 import { readingWords, sectionSentence } from './sentence';
 import { sectionRemarks, sectionSum, studyMetres, studySum, sumWords } from './sums';
-import { type DescribeOptions, capital, inSentence, listWords, plural, valueName } from './words';
+import { type DescribeOptions, capital, inSentence, listWords, measureWords, plural, valueName } from './words';
 
 /** “quarter = 84”, with the user's names of values. */
 export const tempoWords = (tempo: Study['tempo'], { valueNames }: DescribeOptions = {}): string =>
@@ -91,13 +91,16 @@ export function describeStatement(context: DescribeContext, statement: Statement
   const name = study.instruments.find(({ id }) => id === statement.instrument)?.name ?? 'Several instruments';
   const attacks = plural(statement.rhythm.filter((v) => !v.rest).length, 'attack');
   const where = spanWords(context, statement.start, statement.length);
-  if (statement.subject === null) return `${name}: a free line, ${attacks}, ${where}.`;
+  const section = study.sections.find(({ id }) => id === statement.section)!;
+  const long = `${measureWords(statement.length, metreOf(study, section))} long`;
+  if (statement.subject === null) return `${name}: a free line, ${attacks}, ${long}, ${where}.`;
   const all = built.statements.filter((s) => s.section === statement.section && s.subject !== null);
   const details = [
-    `at ${formatFraction(statement.factor)} times its length`,
+    statement.factor.equals(1) ? 'at its own length' : `at ${formatFraction(statement.factor)} times its length`,
     readingWords(statement.reading) + (statement.mirrored ? ', then mirrored' : ''),
     ...(statement.rotation === 0 ? [] : [`rotated by ${plural(statement.rotation, 'value')}`]),
     attacks,
+    long,
     where,
   ];
   return `Statement ${all.indexOf(statement) + 1} of ${all.length}, ${inSentence(name)}: ${details.join(', ')}.`;

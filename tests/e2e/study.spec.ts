@@ -10,7 +10,7 @@ test('opens the demo from the database: title, totals with their sums, clock, mi
   await expect(facts).toContainText('3′40″');
   await expect(facts).toContainText('4 players, 8 instruments');
   await expect(facts).toContainText('Filling with Emptying and Sluice with Sluice, reversed mirror about Pound');
-  await expect(page.getByText('The form mirrors; the values do not; the attacks do not')).toBeVisible();
+  await expect(page.getByText('A mirror in form, not in values, not in attacks')).toBeVisible();
   await expect(sentence(page)).toHaveText(
     'The subject is stated 4 times, one after another, at 1, 5/4, 3/2, 2 times its length, forwards, by crotales, temple blocks, log drum and tam-tam.',
   );
@@ -162,7 +162,7 @@ test('a new study is begun, filled and kept without an account', async ({ page }
   await page.getByRole('button', { name: 'Set' }).click();
   await page.getByRole('button', { name: /^Add a section/ }).click();
   await page.getByRole('radio', { name: 'This one, reversed' }).check();
-  await page.getByRole('button', { name: 'Add', exact: true }).first().click();
+  await page.getByRole('dialog').getByRole('button', { name: 'Add', exact: true }).click();
   await expect(sentence(page)).toHaveText('“Opening” is played from its end, its values reversed.');
   await page.reload();
   await expect(page.getByRole('heading', { level: 1 })).toContainText('Slow Weir');

@@ -161,10 +161,10 @@ describe('describeStatement', () => {
     const context = describeContext(document, buildStudy(document));
     const texts = context.built.statements.map((s) => describeStatement(context, s));
     expect(texts).toEqual([
-      'Statement 1 of 2, bell: at 1 times its length, forwards, 3 attacks, measure 1, from 0′00″ to 0′04″.',
-      'Statement 2 of 2, block: at 2 times its length, backwards by values, rotated by 1 value, 3 attacks, measures 2 to 3, from 0′04″ to 0′12″.',
-      'Statement 1 of 2, block: at 2 times its length, backwards by values, then mirrored, rotated by 1 value, 3 attacks, measures 4 to 5, from 0′12″ to 0′20″.',
-      'Statement 2 of 2, bell: at 1 times its length, forwards, then mirrored, 3 attacks, measure 6, from 0′20″ to 0′24″.',
+      'Statement 1 of 2, bell: at its own length, forwards, 3 attacks, 1 measure long, measure 1, from 0′00″ to 0′04″.',
+      'Statement 2 of 2, block: at 2 times its length, backwards by values, rotated by 1 value, 3 attacks, 2 measures long, measures 2 to 3, from 0′04″ to 0′12″.',
+      'Statement 1 of 2, block: at 2 times its length, backwards by values, then mirrored, rotated by 1 value, 3 attacks, 2 measures long, measures 4 to 5, from 0′12″ to 0′20″.',
+      'Statement 2 of 2, bell: at its own length, forwards, then mirrored, 3 attacks, 1 measure long, measure 6, from 0′20″ to 0′24″.',
     ]);
   });
 });
