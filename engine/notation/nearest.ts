@@ -2,11 +2,14 @@ import { EngineError } from '../errors';
 import { Fraction } from '../exact/fraction';
 import type { Rhythm } from '../rhythm/types';
 import { augment } from '../transform/augment';
+import { canWrite } from './can-write';
+import { type CountedLine, stretchLine } from './pieces';
+import type { Change } from './plan';
 
 const LARGEST_TERM = 16;
 const WANTED = 4;
-/** Long lines are tried at their beginning first, so that a factor that cannot do is found out quickly. */
-const GLANCE = 64;
+/** Measures that are tried first, from the value at fault on, so that a factor that cannot do is found out quickly. */
+const GLANCE = 2;
 
 const gcdOf = (a: number, b: number): number => (b === 0 ? a : gcdOf(b, a % b));
 
@@ -22,25 +25,33 @@ function candidates(): Fraction[] {
   return factors.sort((a, b) => far(a).compare(far(b)) || a.compare(b));
 }
 
-/**
- * Factors by which a rhythm that cannot be written could be stretched so that it can, each really tried.
- * @param canSpell - whether a stretched rhythm can be written
- */
-export function nearestFactors(rhythm: Rhythm, canSpell: (stretched: Rhythm) => boolean): Fraction[] {
+function firstThat(isGood: (factor: Fraction) => boolean): Fraction[] {
   const found: Fraction[] = [];
-  const glance = rhythm.slice(0, GLANCE);
-  const tries = (values: Rhythm, factor: Fraction): boolean => {
+  for (const factor of candidates()) {
     try {
-      return canSpell(augment(values, factor));
+      if (isGood(factor)) found.push(factor);
     } catch (error) {
       // Stretched, it passes another limit: not an offer.
-      if (error instanceof EngineError) return false;
-      throw error;
+      if (!(error instanceof EngineError)) throw error;
     }
-  };
-  for (const factor of candidates()) {
-    if (tries(glance, factor) && (rhythm.length <= GLANCE || tries(rhythm, factor))) found.push(factor);
     if (found.length === WANTED) break;
   }
   return found;
 }
+
+/**
+ * Factors by which a rhythm that cannot be written could be stretched so that it can, each really tried.
+ * @param canSpell - whether a stretched rhythm can be written; what it refuses with an `EngineError` is not offered
+ */
+export const nearestFactors = (rhythm: Rhythm, canSpell: (stretched: Rhythm) => boolean): Fraction[] =>
+  firstThat((factor) => canSpell(augment(rhythm, factor)));
+
+/**
+ * The same for a whole line, counted once.
+ * @param value - the value at fault
+ */
+export const nearestForLine = (line: CountedLine, changes: readonly Change[], value: number): Fraction[] =>
+  firstThat((factor) => {
+    const stretched = stretchLine(line, factor);
+    return stretched !== null && canWrite(stretched, changes, value, GLANCE) && canWrite(stretched, changes);
+  });

@@ -2,7 +2,7 @@ import { LIMITS } from '../limits';
 import { parseMetre } from '../rhythm/metre';
 import { bracketTree } from './bracket-tree';
 import { beamsOf } from './beams';
-import { type Bracket, type BracketPlan, type Weight, bracketsOn } from './brackets';
+import { type Bracket, type BracketFinder, type BracketPlan, type Weight, bracketsOn } from './brackets';
 import { type Part, type Piece, type Splitter, splitterOn } from './split';
 import { type MetreNode, treesOn } from './tree';
 import type { NotationSymbol, TupletMark } from './types';
@@ -16,11 +16,12 @@ export type SpelledSymbol = {
   readonly symbol: Omit<NotationSymbol, 'tiedFromBefore' | 'tiedOn' | 'value'>;
 };
 
-/**
- * Spells one measure. `ends` are the ends of its pieces in ticks from its start, `rests` whether each is a rest.
- * @returns the symbols, or the index of the first piece whose end cannot be written
- */
-export type MeasureSpeller = (metre: string, ends: readonly number[], rests: readonly boolean[]) => readonly SpelledSymbol[] | number;
+/** Spells single measures. `ends` are the ends of a measure's pieces in ticks from its start, `rests` whether each is a rest. */
+export type MeasureSpeller = {
+  /** @returns the symbols, or the index of the first piece whose end cannot be written */
+  spell(metre: string, ends: readonly number[], rests: readonly boolean[]): readonly SpelledSymbol[] | number;
+  canSpell(metre: string, ends: readonly number[]): boolean;
+};
 
 type Draft = {
   readonly piece: number;
@@ -32,6 +33,7 @@ type Draft = {
 };
 
 const NO_TUPLETS: readonly TupletMark[] = [];
+const NO_WEIGHT: Weight = { symbols: 0, ties: 0 };
 
 /** The number of the beam group that a position falls in. */
 function groupAt(node: MetreNode, position: number): number {
@@ -52,7 +54,8 @@ function within(pieces: readonly Piece[], start: number, end: number, shift: num
 
 /** @param whole - ticks of one whole note, a multiple of 256; spelled measures are remembered by their pattern */
 export function measureSpeller(whole: number): MeasureSpeller {
-  const trees = treesOn(whole, whole / LIMITS.shortestSymbol);
+  const least = whole / LIMITS.shortestSymbol;
+  const trees = treesOn(whole, least);
   const splitters = new Map<number, Splitter>();
   /** The splitter where a written whole note counts so many integers. */
   const splitterFor = (written: number): Splitter => {
@@ -89,33 +92,37 @@ export function measureSpeller(whole: number): MeasureSpeller {
     });
   }
 
-  function findBrackets(metre: string, tree: MetreNode, pieces: readonly Piece[], ends: readonly number[]): BracketPlan | null {
+  function finderFor(metre: string, weigh: (span: Bracket | MetreNode) => Weight): BracketFinder {
     const { groups, unit, kind } = parseMetre(metre);
-    const beat = (whole / unit) * (kind === 'simple' ? 1 : Math.min(...groups));
+    return bracketsOn(whole, (whole / unit) * (kind === 'simple' ? 1 : Math.min(...groups)), weigh);
+  }
+
+  function findBrackets(metre: string, tree: MetreNode, pieces: readonly Piece[], ends: readonly number[]): BracketPlan | null {
     const weigh = (span: Bracket | MetreNode): Weight => {
       const drafts = 'actual' in span ? spellBracket(span, pieces) : spellPlain(tree, pieces, span.start, span.end);
       const tied = drafts.filter(({ symbol, piece }, n) => !symbol.rest && (n === 0 ? pieces[piece]!.start < span.start : drafts[n - 1]!.piece === piece));
       return { symbols: drafts.length, ties: tied.length };
     };
-    return bracketsOn(whole, beat, weigh).find(tree, [0, ...ends]);
+    return finderFor(metre, weigh).find(tree, [0, ...ends]);
   }
 
+  const isPlain = (ends: readonly number[]): boolean => ends.every((end) => end % least === 0);
+
+  /** Whether some brackets do, whatever they look like. */
+  const canBracket = (metre: string, ends: readonly number[]): boolean =>
+    isPlain(ends) || finderFor(metre, () => NO_WEIGHT).find(trees.of(metre), [0, ...ends]) !== null;
+
   /** The first piece without whose end, and what follows it, the measure could be written. */
-  function firstUnwritable(metre: string, tree: MetreNode, pieces: readonly Piece[]): number {
-    const fails = (count: number): boolean => {
-      const kept = pieces.slice(0, count);
-      const filled = [...kept, { start: kept.at(-1)!.end, end: tree.end, rest: true }];
-      return findBrackets(metre, tree, filled, filled.map(({ end }) => end)) === null;
-    };
-    for (let count = 1; count < pieces.length; count += 1) if (fails(count)) return count - 1;
-    return pieces.length - 1;
+  function firstUnwritable(metre: string, ends: readonly number[], full: number): number {
+    const count = ends.findIndex((_, index) => !canBracket(metre, [...ends.slice(0, index + 1), full]));
+    return count === -1 ? ends.length - 1 : count;
   }
 
   function spell(metre: string, ends: readonly number[], rests: readonly boolean[]): readonly SpelledSymbol[] | number {
     const tree = trees.of(metre);
     const pieces = ends.map((end, index): Piece => ({ start: index === 0 ? 0 : ends[index - 1]!, end, rest: rests[index]! }));
     const plan = findBrackets(metre, tree, pieces, ends);
-    if (plan === null) return firstUnwritable(metre, tree, pieces);
+    if (plan === null) return firstUnwritable(metre, ends, tree.end);
     const drafts: Draft[] = [];
     let at = 0;
     for (const bracket of plan.brackets) {
@@ -134,10 +141,20 @@ export function measureSpeller(whole: number): MeasureSpeller {
   }
 
   const known = new Map<string, readonly SpelledSymbol[] | number>();
-  return (metre, ends, rests) => {
-    const key = `${metre}:${ends.join()}:${rests.join()}`;
-    let spelled = known.get(key);
-    if (spelled === undefined) known.set(key, (spelled = spell(metre, ends, rests)));
-    return spelled;
+  const answers = new Map<string, boolean>();
+  return {
+    spell(metre, ends, rests) {
+      const key = `${metre}:${ends.join()}:${rests.join()}`;
+      let spelled = known.get(key);
+      if (spelled === undefined) known.set(key, (spelled = spell(metre, ends, rests)));
+      return spelled;
+    },
+    canSpell(metre, ends) {
+      if (isPlain(ends)) return true;
+      const key = `${metre}:${ends.join()}`;
+      let answer = answers.get(key);
+      if (answer === undefined) answers.set(key, (answer = canBracket(metre, ends)));
+      return answer;
+    },
   };
 }
