@@ -1,10 +1,12 @@
 import type { Study, Statement } from '@/engine';
 
-/** Lanes for statements that sound at once: each takes the first lane that is free at its start. */
-export function lanesOf(statements: readonly Statement[]): { lane: Map<string, number>; count: number } {
+/** Lanes for statements that sound at once: each takes the first lane that is free at its start, in the order of the score. */
+export function lanesOf(study: Study, statements: readonly Statement[]): { lane: Map<string, number>; count: number } {
   const ends: number[] = [];
   const lane = new Map<string, number>();
-  for (const statement of [...statements].sort((a, b) => a.start.compare(b.start))) {
+  const order = new Map(study.instruments.map(({ id }, index) => [id, index]));
+  const row = ({ instrument }: Statement) => order.get(instrument ?? '') ?? 0;
+  for (const statement of [...statements].sort((a, b) => a.start.compare(b.start) || row(a) - row(b))) {
     const start = statement.start.valueOf();
     let free = ends.findIndex((end) => end <= start + 1e-9);
     if (free === -1) free = ends.length;

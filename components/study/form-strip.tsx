@@ -82,7 +82,7 @@ export function FormStrip() {
           {study.sections.map((section, index) => {
             const placed = built.sections[index]!;
             const own = built.statements.filter((s) => s.section === section.id);
-            const { lane, count } = lanesOf(own);
+            const { lane, count } = lanesOf(study, own);
             const laneHeight = count === 1 ? 28 : Math.max(9, Math.floor(42 / count));
             const isChosen = selection.section === section.id;
             const first = measureAt(measures, placed.start);
