@@ -8,7 +8,7 @@ import {
   describeContext,
   parseStudy,
 } from '@/engine';
-import { type Draft, writeDraft } from './study-draft';
+import { type Draft, deleteDraft, writeDraft } from './study-draft';
 
 /** A study and everything that the engine makes of it, worked out together once for each change. */
 export type Derived = DescribeContext & { readonly study: Study; readonly built: BuiltStudy };
@@ -34,6 +34,9 @@ export const CHANGE_MARK = 'sesqui:change';
 export const DRAWN_MARK = 'sesqui:drawn';
 export const SYSTEM_MARK = 'sesqui:system';
 
+/** Where drafts are kept: the browser's storage, or a test's. */
+export type DraftStorage = { readonly keep: (id: string, draft: Draft) => boolean; readonly forget: (id: string) => void };
+
 const HISTORY = 500;
 const KEEP_AFTER_MS = 200;
 
@@ -56,9 +59,9 @@ export class StudyEditor {
   constructor(
     readonly id: string,
     document: StudyInput,
-    private readonly baseVersion: number | null,
+    private baseVersion: number | null,
     draft: Draft | null,
-    private readonly keep: (id: string, draft: Draft) => boolean = writeDraft,
+    private readonly storage: DraftStorage = { keep: writeDraft, forget: deleteDraft },
   ) {
     this.current = derive(draft?.document ?? document);
     this.texts = { ...draft?.texts };
@@ -113,12 +116,33 @@ export class StudyEditor {
     this.show(derive(after));
   }
 
+  /** The version that the document was saved as, or started from; null for one that began in this browser. */
+  get version(): number | null {
+    return this.baseVersion;
+  }
+
+  /** A save was acknowledged: what is newer than it stays a draft on top of it, else the draft is let go. */
+  markSaved(saved: Study, version: number): void {
+    this.baseVersion = version;
+    if (this.current.study !== saved || Object.keys(this.texts).length > 0) {
+      this.publish();
+      return;
+    }
+    if (this.timer !== null) clearTimeout(this.timer);
+    this.timer = null;
+    this.storage.forget(this.id);
+    this.isChanged = false;
+    this.isUnkept = false;
+    this.snapshot = this.take();
+    for (const listener of this.listeners) listener();
+  }
+
   /** Writes what waits to be kept: call it before the page goes away. */
   flush(): void {
     if (this.timer === null) return;
     clearTimeout(this.timer);
     this.timer = null;
-    const kept = this.keep(this.id, {
+    const kept = this.storage.keep(this.id, {
       document: this.current.study,
       baseVersion: this.baseVersion,
       texts: this.texts,

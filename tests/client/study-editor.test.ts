@@ -10,11 +10,12 @@ afterEach(() => void vi.useRealTimers());
 
 function open(draft: Draft | null = null, accepts = true) {
   const kept: Draft[] = [];
-  const editor = new StudyEditor('draft-1', blankStudy, 3, draft, (_, next) => {
+  const forget = vi.fn();
+  const keep = (_: string, next: Draft) => {
     if (accepts) kept.push(next);
     return accepts;
-  });
-  return { editor, kept };
+  };
+  return { editor: new StudyEditor('draft-1', blankStudy, 3, draft, { keep, forget }), kept, forget };
 }
 
 describe('StudyEditor', () => {
@@ -67,6 +68,25 @@ describe('StudyEditor', () => {
     const again = open(kept[0]!);
     expect(again.editor.getSnapshot().texts).toEqual({ 'subjects.subject': '1/4 1/0' });
     expect(again.editor.getSnapshot().isChanged).toBe(true);
+  });
+
+  test('a save lets the draft go, unless something newer stands on it; undo reaches past it', () => {
+    const { editor, kept, forget } = open();
+    editor.edit(setTitle('Weir'));
+    const saved = editor.getSnapshot().study;
+    editor.edit(setTitle('Newer'));
+    editor.markSaved(saved, 4);
+    expect(editor.version).toBe(4);
+    expect(forget).not.toHaveBeenCalled();
+    vi.advanceTimersByTime(1_000);
+    expect(kept.at(-1)).toMatchObject({ baseVersion: 4, document: { title: 'Newer' } });
+    editor.markSaved(editor.getSnapshot().study, 5);
+    expect(forget).toHaveBeenCalledTimes(1);
+    expect(editor.getSnapshot().isChanged).toBe(false);
+    editor.undo();
+    editor.undo();
+    expect(editor.getSnapshot().study.title).toBe('Untitled study');
+    expect(editor.getSnapshot().isChanged).toBe(true);
   });
 
   test('says so when the browser does not keep a change', () => {
