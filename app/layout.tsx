@@ -6,7 +6,9 @@ import './globals.css';
 import type { Metadata, Viewport } from 'next';
 import { cookies } from 'next/headers';
 import type { ReactNode } from 'react';
+import { MoveDraftsOnce } from '@/components/move-drafts-once';
 import { Providers } from '@/components/providers';
+import { getCurrentUser } from '@/lib/server/current-user';
 import { readTheme } from './theme';
 
 export const metadata: Metadata = {
@@ -18,10 +20,14 @@ export const viewport: Viewport = { width: 'device-width', initialScale: 1 };
 
 export default async function RootLayout({ children }: { children: ReactNode }) {
   const theme = readTheme(await cookies());
+  const user = await getCurrentUser().catch(() => null);
   return (
     <html lang="en" data-theme={theme === 'system' ? undefined : theme} suppressHydrationWarning>
       <body>
-        <Providers>{children}</Providers>
+        <Providers>
+          <MoveDraftsOnce userId={user?.id ?? null} />
+          {children}
+        </Providers>
       </body>
     </html>
   );

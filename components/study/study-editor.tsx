@@ -1,10 +1,9 @@
 'use client';
 
 import Link from 'next/link';
-import { useEffect, useMemo, useState, useSyncExternalStore } from 'react';
+import { type ReactNode, useEffect, useMemo, useState, useSyncExternalStore } from 'react';
 import { describeSection } from '@/engine';
 import { DRAWN_MARK, type StudyEditor as Editor } from '@/lib/client/study-editor';
-import { TextButton } from '../ui/button';
 import { type Selection, StudyContext, type StudyContextValue, subjectOf } from './context';
 import { FormStrip } from './form-strip';
 import { InstrumentsPanel } from './instruments-panel';
@@ -48,40 +47,8 @@ function useFlush(editor: Editor) {
   }, [editor]);
 }
 
-function KeptLine({ editor, onThrowAway }: { editor: Editor; onThrowAway: () => void }) {
-  const state = useSyncExternalStore(editor.subscribe, editor.getSnapshot, editor.getSnapshot);
-  const [isAsked, setAsked] = useState(false);
-  return (
-    <div className="flex flex-wrap items-baseline gap-x-5 gap-y-1 text-[14px] text-soft" role="status">
-      {state.isUnkept ? (
-        <span className="text-mark">This browser does not keep your changes: its storage is full or closed. Leave this page open.</span>
-      ) : (
-        <span>{state.isChanged ? 'Your changes are kept in this browser.' : 'Nothing changed yet. What you change stays in this browser.'}</span>
-      )}
-      <TextButton disabled={!state.canUndo} onClick={() => editor.undo()}>
-        Undo
-      </TextButton>
-      <TextButton disabled={!state.canRedo} onClick={() => editor.redo()}>
-        Redo
-      </TextButton>
-      {state.isChanged &&
-        (isAsked ? (
-          <span>
-            Throw them away for good?{' '}
-            <TextButton className="text-mark" onClick={onThrowAway}>
-              Throw away
-            </TextButton>{' '}
-            <TextButton onClick={() => setAsked(false)}>Keep</TextButton>
-          </span>
-        ) : (
-          <TextButton onClick={() => setAsked(true)}>Throw my changes away</TextButton>
-        ))}
-    </div>
-  );
-}
-
-/** One study, open: the whole page below the header. */
-export function StudyEditorView({ editor, onThrowAway }: { editor: Editor; onThrowAway: () => void }) {
+/** One study, open: the whole page below the header. `status` says how it is kept. */
+export function StudyEditorView({ editor, status }: { editor: Editor; status: ReactNode }) {
   const state = useSyncExternalStore(editor.subscribe, editor.getSnapshot, editor.getSnapshot);
   const [chosen, setChosen] = useState<Selection>({ section: state.study.sections[0]!.id, statement: null, origin: null });
   useHistoryKeys(editor);
@@ -125,7 +92,7 @@ export function StudyEditorView({ editor, onThrowAway }: { editor: Editor; onThr
   return (
     <StudyContext value={value}>
       <main className="mx-auto max-w-[1536px] px-5 pb-40 pt-6 sm:px-8 lg:px-12">
-        <KeptLine editor={editor} onThrowAway={onThrowAway} />
+        {status}
         <div className="mt-4">
           <StudyHead />
         </div>

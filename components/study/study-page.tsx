@@ -1,14 +1,20 @@
 'use client';
 
-import { useQuery } from '@tanstack/react-query';
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import Link from 'next/link';
 import { useRouter } from 'next/navigation';
-import { type ReactNode, useState } from 'react';
+import { type ReactNode, useEffect, useState } from 'react';
 import { EngineError, type StudyInput } from '@/engine';
-import { type Draft, type ReadDraft, deleteDraft, isLocal, readDraft } from '@/lib/client/study-draft';
-import { StudyEditor } from '@/lib/client/study-editor';
+import { moveDraft } from '@/lib/client/move-drafts';
+import { createStudyMutation, saveStudyMutation } from '@/lib/client/studies-mutations';
 import { studyQuery } from '@/lib/client/studies-queries';
-import { Button } from '../ui/button';
+import { type Draft, type ReadDraft, deleteDraft, isLocal, readDraft } from '@/lib/client/study-draft';
+import { StudyEditor, derive } from '@/lib/client/study-editor';
+import { StudySaver } from '@/lib/client/study-saver';
+import type { StudyItem } from '@/lib/schemas/studies';
+import { Button, TextButton } from '../ui/button';
+import { KeptLine } from './kept-line';
+import { SavingLine } from './saving-line';
 import { StudyEditorView } from './study-editor';
 
 function Message({ children }: { children: ReactNode }) {
@@ -57,13 +63,80 @@ function Unreadable({ id, text, problem, onGone }: { id: string; text: string; p
   );
 }
 
-function Open({ id, document, version, onReload }: { id: string; document: StudyInput | null; version: number | null; onReload: () => void }) {
+/** Puts what stands here into the account, and goes on there. */
+function KeepAsMine({ editor, id }: { editor: StudyEditor; id: string }) {
   const router = useRouter();
+  const { mutate, isPending, error } = useMutation(createStudyMutation());
+  const [saveId] = useState(() => crypto.randomUUID());
+  const keep = () =>
+    mutate(
+      { document: editor.getSnapshot().study, saveId },
+      {
+        onSuccess: (study) => {
+          deleteDraft(id);
+          router.push(`/studies/${study.id}`);
+        },
+      },
+    );
+  return (
+    <>
+      <TextButton className="text-ink" disabled={isPending} onClick={keep}>
+        Keep as my study
+      </TextButton>
+      {error && (
+        <span role="alert" className="text-mark">
+          {error.message}
+        </span>
+      )}
+    </>
+  );
+}
+
+type OpenProps = {
+  readonly id: string;
+  readonly item: StudyItem | null;
+  readonly isSignedIn: boolean;
+  readonly onReload: () => void;
+};
+
+/** An own study: saved by itself; a draft on an older version than the server's waits for a choice. */
+function Own({ id, item, editor }: { id: string; item: StudyItem; editor: StudyEditor }) {
+  const client = useQueryClient();
+  const [saver] = useState(() => {
+    const base = editor.version;
+    const made = new StudySaver(editor, derive(item.document).study, item.updatedAt, (request) =>
+      client.getMutationCache().build(client, client.defaultMutationOptions(saveStudyMutation(id))).execute(request),
+    );
+    const { isChanged, study } = editor.getSnapshot();
+    if (!isChanged) made.settle(study, item.version, item.updatedAt);
+    else if (base !== item.version) made.holdForConflict();
+    return made;
+  });
+  useEffect(() => {
+    const retry = () => saver.retryNow();
+    saver.start();
+    window.addEventListener('online', retry);
+    window.addEventListener('focus', retry);
+    return () => {
+      saver.stop();
+      window.removeEventListener('online', retry);
+      window.removeEventListener('focus', retry);
+      // The list and the next opening ask the server anew.
+      void client.invalidateQueries({ queryKey: ['studies'] });
+      client.removeQueries({ queryKey: studyQuery(id).queryKey });
+    };
+  }, [saver, client, id]);
+  return <StudyEditorView editor={editor} status={<SavingLine editor={editor} saver={saver} id={id} />} />;
+}
+
+function Open({ id, item, isSignedIn, onReload }: OpenProps) {
+  const router = useRouter();
+  const isOwn = item !== null && !item.isDemo;
   const [read] = useState<ReadDraft>(() => readDraft(id));
   const [opened] = useState<Opened>(() => {
-    if (read.kind === 'draft') return openEditor(id, read.draft.document, version, read.draft);
-    if (document === null) return { problem: 'This study is not in this browser. A study that was begun without an account stays where it was begun.' };
-    return openEditor(id, document, version, null);
+    if (read.kind === 'draft') return openEditor(id, read.draft.document, isOwn ? read.draft.baseVersion : (item?.version ?? null), read.draft);
+    if (item === null) return { problem: 'This study is not in this browser. A study that was begun without an account stays where it was begun.' };
+    return openEditor(id, item.document, item.version, null);
   });
   if (read.kind === 'unreadable') {
     return <Unreadable id={id} text={read.text} problem="It was made by another version of Sesqui, or is damaged." onGone={onReload} />;
@@ -77,21 +150,28 @@ function Open({ id, document, version, onReload }: { id: string; document: Study
       </Message>
     );
   }
+  const { editor } = opened;
+  if (isOwn) return <Own id={id} item={item} editor={editor} />;
+  const throwAway = () => {
+    editor.flush();
+    deleteDraft(id);
+    if (item === null) router.push('/studies');
+    else onReload();
+  };
   return (
     <StudyEditorView
-      editor={opened.editor}
-      onThrowAway={() => {
-        opened.editor.flush();
-        deleteDraft(id);
-        if (document === null) router.push('/studies');
-        else onReload();
-      }}
+      editor={editor}
+      status={
+        <KeptLine editor={editor} onThrowAway={throwAway}>
+          {isSignedIn && <KeepAsMine editor={editor} id={id} />}
+        </KeptLine>
+      }
     />
   );
 }
 
-function Remote({ id }: { id: string }) {
-  const { data, error, isPending, refetch } = useQuery(studyQuery(id));
+function Remote({ id, isSignedIn }: { id: string; isSignedIn: boolean }) {
+  const { data, error, isPending, refetch } = useQuery({ ...studyQuery(id), staleTime: 0, gcTime: 0 });
   const [round, setRound] = useState(0);
   if (isPending) return <Message>Opening…</Message>;
   // Without an answer from the server a draft in this browser still opens.
@@ -105,11 +185,37 @@ function Remote({ id }: { id: string }) {
       </Message>
     );
   }
-  return <Open key={round} id={id} document={data?.document ?? null} version={data?.version ?? null} onReload={() => setRound(round + 1)} />;
+  return <Open key={round} id={id} item={data ?? null} isSignedIn={isSignedIn} onReload={() => setRound(round + 1)} />;
+}
+
+/** A study that was begun without an account, opened with one: it moves there first. */
+function MoveThenOpen({ id }: { id: string }) {
+  const router = useRouter();
+  const { error, mutate } = useMutation({
+    mutationFn: () => moveDraft(id),
+    onSuccess: (moved) => router.replace(moved ? `/studies/${moved.id}` : '/studies'),
+    networkMode: 'always',
+  });
+  useEffect(() => mutate(), [mutate]);
+  if (!error) return <Message>Moving this study into your account…</Message>;
+  return (
+    <Message>
+      <p role="alert">{`This study is still in this browser only. ${error.message}`}</p>
+      <Button className="mt-4" onClick={() => mutate()}>
+        Try again
+      </Button>
+    </Message>
+  );
+}
+
+function Local({ id }: { id: string }) {
+  const [round, setRound] = useState(0);
+  return <Open key={round} id={id} item={null} isSignedIn={false} onReload={() => setRound(round + 1)} />;
 }
 
 /** A study by its address: from the server with the browser's draft over it, or from this browser alone. */
-export function StudyPage({ id }: { id: string }) {
-  const [round, setRound] = useState(0);
-  return isLocal(id) ? <Open key={round} id={id} document={null} version={null} onReload={() => setRound(round + 1)} /> : <Remote id={id} />;
+export function StudyPage({ id, isSignedIn }: { id: string; isSignedIn: boolean }) {
+  if (!isLocal(id)) return <Remote id={id} isSignedIn={isSignedIn} />;
+  if (isSignedIn && readDraft(id).kind === 'draft') return <MoveThenOpen id={id} />;
+  return <Local id={id} />;
 }

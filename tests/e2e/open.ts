@@ -1,4 +1,5 @@
 import type { Page } from '@playwright/test';
+import { demoAccounts } from '../../db/demo/accounts';
 import { expect } from '../helpers/browser';
 
 /** Opens a study and waits until its sentence stands. */
@@ -32,3 +33,13 @@ export async function drawnScore(page: Page) {
 
 /** What the page says is wrong; the framework's own announcer of routes is not meant. */
 export const alert = (page: Page) => page.locator('[role="alert"]:not(#__next-route-announcer__)');
+
+/** Signs in with the demo account of a role, by the page, and waits for the list of studies. */
+export async function signIn(page: Page, role: (typeof demoAccounts)[number]['role']): Promise<void> {
+  const { email, password } = demoAccounts.find((one) => one.role === role)!;
+  await page.goto('/sign-in');
+  await page.getByRole('textbox', { name: 'E-mail' }).fill(email);
+  await page.getByLabel('Password').fill(password);
+  await page.getByRole('button', { name: 'Sign in' }).click();
+  await expect(page).toHaveURL(/\/studies$/);
+}

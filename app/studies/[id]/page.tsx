@@ -1,9 +1,10 @@
 import type { Metadata } from 'next';
 import { StudyLoader } from '@/components/study/study-loader';
+import { readPerson } from '../../person';
 
 export const metadata: Metadata = { title: 'Study' };
 
 export default async function StudyPage({ params }: { params: Promise<{ id: string }> }) {
   const { id } = await params;
-  return <StudyLoader id={decodeURIComponent(id)} />;
+  return <StudyLoader id={decodeURIComponent(id)} isSignedIn={(await readPerson()) !== null} />;
 }
