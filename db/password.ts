@@ -10,9 +10,6 @@ const SALT_BYTES = 16;
 /** Hashes at once; more wait, so that a flood of sign-ins cannot take all memory. */
 const AT_ONCE = 2;
 
-/** Fewest and most characters of a password. */
-export const PASSWORD_LENGTH = { min: 12, max: 256 } as const;
-
 let running = 0;
 const waiting: (() => void)[] = [];
 

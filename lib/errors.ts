@@ -8,12 +8,18 @@ export const ERROR_STATUS = {
   forbidden: 403,
   /** not there, or not for this reader: the two are not told apart */
   not_found: 404,
-  /** changed by somebody else meanwhile */
-  conflict: 409,
+  /** somebody saved another version first; `current` beside the error is that one */
+  version_conflict: 409,
+  /** the id of this save has been used for another document */
+  save_id_used: 409,
+  /** nobody would be left to grant roles */
+  last_administrator: 409,
   too_large: 413,
+  /** the body is of another kind than JSON */
+  wrong_type: 415,
   /** read, but not accepted; `fields` says where */
   invalid: 422,
-  too_many_requests: 429,
+  too_many: 429,
   /** a fault of ours, logged */
   internal: 500,
   /** the database does not answer */

@@ -36,7 +36,7 @@ await main(async () => {
   const elsewhere = process.env.DATABASE_URL;
   if (elsewhere) await checkDatabaseUrl(elsewhere);
   const databaseUrl = elsewhere || (await ownDatabase());
-  const tasks = elsewhere ? ['migrate', 'studies'] : ['migrate', 'studies', 'accounts'];
+  const tasks = elsewhere ? ['migrate', 'studies', 'purge'] : ['migrate', 'studies', 'purge', 'accounts'];
   const printed = await prepareDatabase(databaseUrl, tasks);
   if (!isDevelopment) await build();
   const command = isDevelopment ? 'dev' : 'start';

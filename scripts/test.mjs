@@ -40,13 +40,13 @@ async function build() {
 }
 
 /** The production server on the test database; undefined where it does not come up, which has been said then. */
-async function serve(databaseUrl) {
+async function serve(databaseUrl, secret) {
   try {
     const { code, output } = await ensureBuild();
     if (code !== 0 && !results.has('build')) console.error(output);
     if (code !== 0) throw new Stop('There is no production build to test against.');
     await prepareDatabase(databaseUrl, ['migrate', 'studies', 'accounts']);
-    return await startWebServer({ port: await freePort(), databaseUrl, secret: randomBytes(32).toString('base64url') });
+    return await startWebServer({ port: await freePort(), databaseUrl, secret });
   } catch (error) {
     if (!(error instanceof Stop)) throw error;
     console.error(`\n${error.message}`);
@@ -95,8 +95,10 @@ await main(
     await stage('types', types);
     await stage('build', build);
     const needsServer = asked.length === 0 || asked.includes('unit') || asked.includes('browser');
-    const server = needsServer ? await serve(databaseUrl) : undefined;
-    const env = { TEST_DATABASE_URL: serverUrl, ...(server && { TEST_BASE_URL: server.url }) };
+    const secret = randomBytes(32).toString('base64url');
+    const server = needsServer ? await serve(databaseUrl, secret) : undefined;
+    const application = server && { TEST_BASE_URL: server.url, TEST_APPLICATION_DATABASE_URL: databaseUrl, TEST_SECRET: secret };
+    const env = { TEST_DATABASE_URL: serverUrl, ...application };
     await stage('unit', () => unit(env));
     await stage('browser', () => browser(env));
     if (server) await endChild(server.child);

@@ -1,21 +1,29 @@
-import { and, asc, eq, isNull, or, sql } from 'drizzle-orm';
+import { and, asc, eq, getTableColumns, isNull, or, sql } from 'drizzle-orm';
 import type { Study } from '../../engine';
 import type { Database } from '../connect';
+import { UUID } from '../cursor';
+import { studyFigures } from '../figures';
 import { studies, studyVersions } from '../schema';
 
-const UUID = /^[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}$/i;
+const { id, slug, title, summary, version, createdAt, updatedAt, deletedAt, measures, seconds, strip, document, isDemo } = getTableColumns(studies);
+/** What lists show: never the document. */
+export const LISTED = { id, slug, title, summary, version, createdAt, updatedAt, deletedAt, measures, seconds, strip };
+/** A whole study. */
+export const WHOLE = { id, slug, title, version, document, updatedAt, isDemo };
+
+/** A row that an id or a slug names. */
+export const named = (name: string) => (UUID.test(name) ? eq(studies.id, name) : eq(studies.slug, name));
+
+/**
+ * The columns that a document fills.
+ * @throws EngineError where the document cannot be built
+ */
+export const columnsOf = (study: Study) => ({ title: study.title, document: study, format: study.format, ...studyFigures(study) });
 
 /** The demo studies, in order of title, without their documents. */
 export async function listDemoStudies(database: Database) {
   return database
-    .select({
-      id: studies.id,
-      slug: studies.slug,
-      title: studies.title,
-      summary: studies.summary,
-      version: studies.version,
-      updatedAt: studies.updatedAt,
-    })
+    .select(LISTED)
     .from(studies)
     .where(and(studies.isDemo, isNull(studies.deletedAt)))
     .orderBy(asc(studies.title));
@@ -28,20 +36,11 @@ export async function listDemoStudies(database: Database) {
  * @param by.userId - the signed-in reader, null for anybody
  */
 export async function getStudy(database: Database, { id, userId }: { id: string; userId: string | null }) {
-  const named = UUID.test(id) ? eq(studies.id, id) : eq(studies.slug, id);
   const allowed = userId === null ? studies.isDemo : or(studies.isDemo, eq(studies.ownerId, userId));
   const [row] = await database
-    .select({
-      id: studies.id,
-      slug: studies.slug,
-      title: studies.title,
-      version: studies.version,
-      document: studies.document,
-      updatedAt: studies.updatedAt,
-      isDemo: studies.isDemo,
-    })
+    .select(WHOLE)
     .from(studies)
-    .where(and(named, isNull(studies.deletedAt), allowed));
+    .where(and(named(id), isNull(studies.deletedAt), allowed));
   return row;
 }
 
@@ -53,28 +52,30 @@ export async function upsertDemoStudy(
   database: Database,
   { slug, summary, document }: { slug: string; summary: string; document: Study },
 ): Promise<'added' | 'updated' | 'unchanged'> {
-  const values = { title: document.title, summary, document, format: document.format };
+  const { measures, seconds, strip, ...own } = columnsOf(document);
+  const figures = { measures, seconds, strip };
+  const { title } = own;
   return database.transaction(async (tx) => {
     const [added] = await tx
       .insert(studies)
-      .values({ ...values, slug, isDemo: true })
+      .values({ ...own, ...figures, summary, slug, isDemo: true })
       .onConflictDoNothing({ target: studies.slug })
       .returning({ id: studies.id, version: studies.version });
     if (added) {
-      await tx.insert(studyVersions).values({ studyId: added.id, version: added.version, document });
+      await tx.insert(studyVersions).values({ studyId: added.id, version: added.version, title, document });
       return 'added';
     }
     const changed = sql`${studies.document} <> ${JSON.stringify(document)}::jsonb`;
     const [updated] = await tx
       .update(studies)
-      .set({ ...values, version: sql`${studies.version} + 1`, updatedAt: sql`now()` })
+      .set({ ...own, ...figures, summary, version: sql`${studies.version} + 1`, updatedAt: sql`now()` })
       .where(and(eq(studies.slug, slug), studies.isDemo, changed))
       .returning({ id: studies.id, version: studies.version });
     if (updated) {
-      await tx.insert(studyVersions).values({ studyId: updated.id, version: updated.version, document });
+      await tx.insert(studyVersions).values({ studyId: updated.id, version: updated.version, title, document });
       return 'updated';
     }
-    await tx.update(studies).set({ summary }).where(and(eq(studies.slug, slug), studies.isDemo));
+    await tx.update(studies).set({ ...figures, summary }).where(and(eq(studies.slug, slug), studies.isDemo));
     return 'unchanged';
   });
 }

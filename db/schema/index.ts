@@ -2,5 +2,5 @@ export { accounts } from './accounts';
 export { sessions } from './sessions';
 export { studies } from './studies';
 export { studyVersions } from './study-versions';
-export { userRole, users } from './users';
+export { paperSize, userRole, users, valueNames } from './users';
 export { verificationTokens } from './verification-tokens';

@@ -1,4 +1,4 @@
-import { integer, jsonb, pgTable, primaryKey, timestamp, uuid } from 'drizzle-orm/pg-core';
+import { integer, jsonb, pgTable, primaryKey, text, timestamp, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
 import type { Study } from '../../engine';
 import { studies } from './studies';
 import { users } from './users';
@@ -11,10 +11,17 @@ export const studyVersions = pgTable(
       .notNull()
       .references(() => studies.id, { onDelete: 'cascade' }),
     version: integer().notNull(),
+    /** the document's title, so that a list of versions reads no documents */
+    title: text().notNull().default(''),
     document: jsonb().$type<Study>().notNull(),
     /** null for the demo's own releases, and where the account is gone */
     savedBy: uuid().references(() => users.id, { onDelete: 'set null' }),
-    createdAt: timestamp({ withTimezone: true }).notNull().defaultNow(),
+    /** the sender's own id of this save: sent again, it is not saved again */
+    saveId: uuid(),
+    createdAt: timestamp({ withTimezone: true, precision: 3 }).notNull().defaultNow(),
   },
-  (table) => [primaryKey({ columns: [table.studyId, table.version] })],
+  (table) => [
+    primaryKey({ columns: [table.studyId, table.version] }),
+    uniqueIndex('study_versions_save').on(table.savedBy, table.saveId),
+  ],
 );

@@ -3,10 +3,13 @@ import type { NextAuthOptions } from 'next-auth';
 import CredentialsProvider from 'next-auth/providers/credentials';
 import { z } from 'zod';
 import { getDatabase } from '@/db/client';
-import { PASSWORD_LENGTH, verifyPassword } from '@/db/password';
+import { verifyPassword } from '@/db/password';
 import { getCredentials, normaliseEmail } from '@/db/queries/users';
+import { PASSWORD_LENGTH } from '../schemas/account';
+import { addressOf } from './address';
 import { getEnv } from './env';
 import { logFault } from './log-fault';
+import { SESSION_SECONDS } from './session-cookie';
 import { SignInLimit } from './sign-in-limit';
 
 /** 254 is the longest address that mail can be sent to (RFC 5321, 4.5.3.1.3, less the angle brackets). */
@@ -27,7 +30,7 @@ async function authorize(given: unknown, address: string) {
   const account = await getCredentials(getDatabase(), email);
   if (!(await verifyPassword(read.data.password, account?.passwordHash)) || !account) return null;
   limit.succeed(address, email);
-  return { id: account.id, name: account.name, email: account.email, role: account.role };
+  return { id: account.id, name: account.name, email: account.email, role: account.role, epoch: account.sessionEpoch };
 }
 
 /**
@@ -44,24 +47,22 @@ async function authorizeSafely(given: unknown, address: string) {
   }
 }
 
-function addressOf(headers: Record<string, unknown> | undefined): string {
-  const forwarded = headers?.['x-forwarded-for'];
-  return typeof forwarded === 'string' ? (forwarded.split(',')[0] ?? '').trim() : 'unknown';
-}
-
-/** The sign-in library's settings: sessions are signed tokens that carry the account's id and role. */
+/**
+ * The sign-in library's settings: sessions are sealed tokens that carry the account's id and its number of
+ * sessions; what the browser sends to change its own session is not looked at.
+ */
 export const getAuthOptions = (): NextAuthOptions => ({
   secret: getEnv().NEXTAUTH_SECRET,
-  session: { strategy: 'jwt', maxAge: 30 * 24 * 60 * 60 },
+  session: { strategy: 'jwt', maxAge: SESSION_SECONDS },
   pages: { signIn: '/sign-in', error: '/sign-in' },
   providers: [
     CredentialsProvider({
       credentials: { email: { label: 'E-mail', type: 'email' }, password: { label: 'Password', type: 'password' } },
-      authorize: (given, req) => authorizeSafely(given, addressOf(req.headers)),
+      authorize: (given, req) => authorizeSafely(given, addressOf(req.headers?.['x-forwarded-for'])),
     }),
   ],
   callbacks: {
-    jwt: ({ token, user }) => (user ? { ...token, id: user.id, role: user.role } : token),
-    session: ({ session, token }) => ({ ...session, user: { ...session.user, id: token.id, role: token.role } }),
+    jwt: ({ token, user }) => (user ? { ...token, id: user.id, role: user.role, epoch: user.epoch } : token),
+    session: ({ session, token }) => ({ ...session, user: { ...session.user, id: token.id, role: token.role }, epoch: token.epoch }),
   },
 });

@@ -2,44 +2,91 @@ import { beforeEach, describe, expect, it, vi } from 'vitest';
 import { getCurrentUser, type CurrentUser } from '@/lib/server/current-user';
 import { requireSameOrigin } from '@/lib/server/same-origin';
 import { SignInLimit } from '@/lib/server/sign-in-limit';
-import { withPublic } from '@/lib/server/with-public';
-import { withUser } from '@/lib/server/with-user';
+import { withPublic, withUser } from '@/lib/server/with-access';
 
 vi.mock('@/lib/server/current-user', () => ({ getCurrentUser: vi.fn() }));
 
-const wren: CurrentUser = { id: 'u1', name: 'Wren', email: 'wren@sesqui.example', role: 'student' };
+const wren: CurrentUser = { id: 'u1', name: 'Wren', email: 'wren@sesqui.example', role: 'student', sessionEpoch: 0 };
 const context = { params: Promise.resolve({ id: 'weir' }) };
 const request = (method: string, headers: Record<string, string> = {}) =>
   new Request('http://127.0.0.1:3000/api/studies', { method, headers: { host: '127.0.0.1:3000', ...headers } });
 
 beforeEach(() => void vi.mocked(getCurrentUser).mockResolvedValue(null));
 
+const json = { 'content-type': 'application/json' };
+const sent = (method: string, body: string, headers: Record<string, string> = json) =>
+  new Request('http://127.0.0.1:3000/api/account', { method, body, headers: { host: '127.0.0.1:3000', ...headers } });
+const answerOf = async (response: Response) => [response.status, await response.json()];
+const refusal = (status: number, code: string, message: string) => [status, { error: { code, message } }];
+
 describe('withUser', () => {
-  const handler = withUser(async ({ user, params }) => Response.json({ user: user.id, params }));
+  const handler = withUser('GET /api/account', async ({ user, params, query }) => Response.json({ user: user.id, params, query }));
 
   it('refuses nobody in particular with 401', async () => {
-    const response = await handler(request('GET'), context);
-    expect([response.status, await response.json()]).toEqual([401, { error: { code: 'unauthorized', message: 'Sign in first.' } }]);
+    expect(await answerOf(await handler(request('GET'), context))).toEqual(refusal(401, 'unauthorized', 'Sign in first.'));
   });
 
   it('hands the handler who is signed in, and the address’s parts', async () => {
     vi.mocked(getCurrentUser).mockResolvedValue(wren);
-    const response = await handler(request('GET'), context);
-    expect([response.status, await response.json()]).toEqual([200, { user: 'u1', params: { id: 'weir' } }]);
+    expect(await answerOf(await handler(request('GET'), context))).toEqual([200, { user: 'u1', params: { id: 'weir' }, query: {} }]);
+  });
+
+  it('refuses a role that the table of access does not name', async () => {
+    const people = withUser('GET /api/people', async () => Response.json({ ok: true }));
+    for (const [role, status] of [['student', 403], ['teacher', 403], ['composer', 403], ['administrator', 200]] as const) {
+      vi.mocked(getCurrentUser).mockResolvedValue({ ...wren, role });
+      expect([role, (await people(request('GET'), context)).status]).toEqual([role, status]);
+    }
   });
 });
 
 describe('withPublic', () => {
-  it('turns what a handler throws into an answer', async () => {
-    const response = await withPublic(async ({ req }) => Response.json(await req.json()))(request('GET'), context);
-    expect(response.status).toBe(400);
+  const handler = vi.fn(async () => Response.json({ ok: true }));
+  const register = withPublic('POST /api/register', handler);
+  let sender = 0;
+  beforeEach(() => void (sender += 1));
+  const from = (headers: Record<string, string> = json) => ({ ...headers, 'x-forwarded-for': `198.51.100.${sender}` });
+
+  it.each([
+    ['another site', { ...json, 'sec-fetch-site': 'cross-site' }, '{}', 403, 'forbidden'],
+    ['a form', { 'content-type': 'application/x-www-form-urlencoded' }, 'a=b', 415, 'wrong_type'],
+    ['plain text', { 'content-type': 'text/plain' }, '{}', 415, 'wrong_type'],
+    ['what is no JSON', json, '{', 400, 'unreadable'],
+    ['more than it takes', json, JSON.stringify('x'.repeat(16 * 1024)), 413, 'too_large'],
+  ])('refuses a change from %s before the handler sees it', async (_, headers, body, status, code) => {
+    handler.mockClear();
+    const response = await register(sent('POST', body, from(headers)), context);
+    expect([response.status, await response.json()]).toMatchObject([status, { error: { code } }]);
+    expect(handler).not.toHaveBeenCalled();
   });
 
-  it('refuses a changing request from another site before the handler sees it', async () => {
-    const handler = vi.fn(async () => new Response());
-    const response = await withPublic(handler)(request('POST', { 'sec-fetch-site': 'cross-site' }), context);
-    expect(response.status).toBe(403);
-    expect(handler).not.toHaveBeenCalled();
+  it('takes a body of exactly the limit, and refuses one of a byte more that does not tell its length', async () => {
+    const body = (bytes: number) => JSON.stringify('x'.repeat(bytes - 2));
+    expect((await register(sent('POST', body(16 * 1024), from()), context)).status).toBe(200);
+    const stream = new Blob([body(16 * 1024 + 1)]).stream();
+    const request = new Request('http://127.0.0.1:3000/api/register', { method: 'POST', body: stream, headers: { host: '127.0.0.1:3000', ...from() }, duplex: 'half' } as RequestInit);
+    expect((await register(request, context)).status).toBe(413);
+  });
+
+  it('refuses text that is no UTF-8', async () => {
+    const request = new Request('http://127.0.0.1:3000/api/register', { method: 'POST', body: new Uint8Array([0x22, 0xff, 0x22]), headers: { host: '127.0.0.1:3000', ...from() } });
+    expect((await register(request, context)).status).toBe(400);
+  });
+
+  it('lets one address make ten accounts an hour, and tells the eleventh to wait', async () => {
+    const statuses = [];
+    for (let i = 0; i < 11; i += 1) statuses.push((await register(sent('POST', '{}', from()), context)).status);
+    expect(statuses).toEqual([...Array.from({ length: 10 }, () => 200), 429]);
+  });
+
+  it('counts saves for the account, 120 a minute', async () => {
+    const save = withUser('PUT /api/studies/[id]', async () => Response.json({ ok: true }));
+    const tries = async (id: string) => {
+      vi.mocked(getCurrentUser).mockResolvedValue({ ...wren, id });
+      return (await save(sent('PUT', '{}'), context)).status;
+    };
+    for (let i = 0; i < 120; i += 1) expect(await tries('busy')).toBe(200);
+    expect([await tries('busy'), await tries('other')]).toEqual([429, 200]);
   });
 });
 

@@ -17,7 +17,7 @@ describe('users', () => {
     expect(await createUserIfMissing(db.database, { ...wren, name: 'Another' })).toBe(false);
     const found = await getCredentials(db.database, 'WREN@sesqui.EXAMPLE ');
     expect(found).toMatchObject({ name: 'Wren', email: 'wren@sesqui.example', role: 'student', passwordHash: 'x' });
-    expect(await getUser(db.database, found!.id)).toEqual({ id: found!.id, name: 'Wren', email: 'wren@sesqui.example', role: 'student' });
+    expect(await getUser(db.database, found!.id)).toEqual({ id: found!.id, name: 'Wren', email: 'wren@sesqui.example', role: 'student', sessionEpoch: 0 });
   });
 
   it('are not found once their account is closed', async () => {

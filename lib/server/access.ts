@@ -1,0 +1,51 @@
+import 'server-only';
+import type { UserRole } from '@/db/queries/users';
+import { BODY_BYTES, type RateName } from './limits';
+
+/** Who may call a handler at all; whose row it is stands in the query. */
+type Who = 'anybody' | 'signed-in' | readonly UserRole[];
+
+export type Access = {
+  readonly who: Who;
+  /** whose rows it reads or changes: one's own, one's own or a demo, none of anybody's work */
+  readonly rows: 'own' | 'own or demo' | 'demo' | 'people' | 'none';
+  readonly rate?: RateName;
+  /** most bytes of the body; without it, no body is read */
+  readonly body?: number;
+};
+
+const { small, document } = BODY_BYTES;
+
+/**
+ * Who may what: every handler, and what guards it. A handler without a row does not compile; a row or a handler without
+ * expectations for each role, the owner, a stranger and nobody fails `tests/api/permissions.test.ts`. No role may read,
+ * change or delete another's study: administrators included.
+ */
+export const ACCESS = {
+  'GET /api/health': { who: 'anybody', rows: 'none' },
+  'POST /api/register': { who: 'anybody', rows: 'none', rate: 'register', body: small },
+
+  'GET /api/account': { who: 'signed-in', rows: 'own' },
+  'PATCH /api/account': { who: 'signed-in', rows: 'own', rate: 'change', body: small },
+  'POST /api/account/password': { who: 'signed-in', rows: 'own', rate: 'password', body: small },
+  'POST /api/account/sign-out-everywhere': { who: 'signed-in', rows: 'own', rate: 'change' },
+
+  'GET /api/people': { who: ['administrator'], rows: 'people' },
+  'PATCH /api/people/[id]': { who: ['administrator'], rows: 'people', rate: 'change', body: small },
+
+  /** `?list=own` asks for a signed-in reader */
+  'GET /api/studies': { who: 'anybody', rows: 'own or demo' },
+  'POST /api/studies': { who: 'signed-in', rows: 'own', rate: 'create', body: document },
+  'GET /api/studies/[id]': { who: 'anybody', rows: 'own or demo' },
+  'PUT /api/studies/[id]': { who: 'signed-in', rows: 'own', rate: 'save', body: document },
+  'PATCH /api/studies/[id]': { who: 'signed-in', rows: 'own', rate: 'change', body: small },
+  'DELETE /api/studies/[id]': { who: 'signed-in', rows: 'own', rate: 'change' },
+  'POST /api/studies/[id]/copy': { who: 'signed-in', rows: 'own or demo', rate: 'create', body: small },
+  'POST /api/studies/[id]/restore': { who: 'signed-in', rows: 'own', rate: 'change' },
+  'GET /api/studies/[id]/versions': { who: 'signed-in', rows: 'own or demo' },
+  'GET /api/studies/[id]/versions/[version]': { who: 'signed-in', rows: 'own or demo' },
+} as const satisfies Record<string, Access>;
+
+export type Route = keyof typeof ACCESS;
+/** The routes that only somebody who is signed in may call. */
+export type SignedInRoute = { [K in Route]: (typeof ACCESS)[K]['who'] extends 'anybody' ? never : K }[Route];

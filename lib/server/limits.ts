@@ -1,0 +1,44 @@
+import 'server-only';
+
+/**
+ * Every limit on requests, in one place; all are settings of ours. Rates are counted in the memory of one process: they start
+ * again with it, and several processes count apart. The engine's limits on documents are in `engine/limits.ts`.
+ */
+
+/** Most bytes of a body, checked before it is read as JSON. */
+export const BODY_BYTES = {
+  /** anything but a study */
+  small: 16 * 1024,
+  /** a study document and what travels with it */
+  document: 2 * 1024 * 1024,
+} as const;
+
+const SECOND = 1_000;
+const MINUTE = 60 * SECOND;
+
+/**
+ * How often something may be done in a stretch of time, in milliseconds. Counted for the account, or where nobody is signed
+ * in for the address that the request comes from.
+ */
+export const RATES = {
+  /** saving a study: by itself it is saved less than once a second */
+  save: { most: 120, within: MINUTE },
+  /** new studies, copies included */
+  create: { most: 60, within: MINUTE },
+  /** any other change */
+  change: { most: 120, within: MINUTE },
+  /** accounts made from one address */
+  register: { most: 10, within: 60 * MINUTE },
+  /** tries at one's present password, when changing it */
+  password: { most: 10, within: 15 * MINUTE },
+  /** tries at signing in, from one address for one account */
+  signInFromAddress: { most: 10, within: 15 * MINUTE },
+  /** tries at signing in to one account from anywhere, since a sender can lie about its address */
+  signInFromAnywhere: { most: 50, within: 15 * MINUTE },
+} as const;
+
+export type Rate = (typeof RATES)[keyof typeof RATES];
+export type RateName = keyof typeof RATES;
+
+/** Counts kept in memory at most for one rate; the oldest go first. */
+export const COUNTS_KEPT = 20_000;
