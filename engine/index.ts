@@ -37,7 +37,7 @@ export {
   type StudyInput,
 } from './study/schema';
 export { buildStudy } from './study/build';
-export { statementsOf, type LineSource } from './study/line';
+export type { LineSource } from './study/line';
 export { proportionFactors } from './process/proportion';
 export type { BuiltSection, BuiltStudy, Line, Palindrome, PalindromeSense, Statement } from './study/types';
 

@@ -79,11 +79,25 @@ export function toFraction(input: Exact): Fraction {
   return refuse(`“${text}” is not a fraction. Write one such as 3/2, 1 1/2, 1.5 or 150%.`);
 }
 
+/** Factors read before: the same few stand in a piece over and over. */
+const factors = new Map<string, Fraction>();
+
 /**
  * The factor of an augmentation or diminution.
  * @throws EngineError `invalid_factor` unless above 0 and within the limit, `invalid_fraction` where it cannot be read
  */
 export function toFactor(input: Exact): Fraction {
+  if (typeof input !== 'string') return checkFactor(input);
+  let factor = factors.get(input);
+  if (factor === undefined) {
+    factor = checkFactor(input);
+    if (factors.size > 1_000) factors.clear();
+    factors.set(input, factor);
+  }
+  return factor;
+}
+
+function checkFactor(input: Exact): Fraction {
   const factor = toFraction(input);
   if (factor.compare(ZERO) <= 0) {
     throw new EngineError('invalid_factor', `The factor ${formatFraction(factor)} stretches to nothing. A factor must be above 0.`);

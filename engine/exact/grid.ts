@@ -32,9 +32,14 @@ const tooFine = (): never => {
  * @throws EngineError `too_fine` where positions up to `longest` would pass 2^53
  */
 export function gridFor(values: Iterable<Fraction>, longest: Fraction): Grid {
+  // Equal lengths are mostly one object: asking for it is cheaper than asking for a big integer.
+  const objects = new Set<Fraction>();
   const seen = new Set<bigint>();
   let denominator = 1n;
-  for (const { d } of values) {
+  for (const value of values) {
+    if (objects.has(value)) continue;
+    objects.add(value);
+    const { d } = value;
     if (seen.has(d)) continue;
     seen.add(d);
     denominator = lcm(denominator, d);
@@ -42,9 +47,17 @@ export function gridFor(values: Iterable<Fraction>, longest: Fraction): Grid {
   }
   if ((denominator * longest.n) / longest.d > GREATEST) tooFine();
   const cache = new Map<number, Fraction>();
+  const counted = new Map<Fraction, number>();
   return {
     denominator: Number(denominator),
-    ticks: (value) => Number((value.s * value.n * denominator) / value.d),
+    ticks(value) {
+      let ticks = counted.get(value);
+      if (ticks === undefined) {
+        ticks = Number((value.s * value.n * denominator) / value.d);
+        counted.set(value, ticks);
+      }
+      return ticks;
+    },
     fraction(ticks) {
       let value = cache.get(ticks);
       if (value === undefined) {

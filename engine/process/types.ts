@@ -9,6 +9,8 @@ export type TracedValue = Value & { readonly origin: number | null };
 export type Placed = {
   /** from the section's start, in whole notes */
   readonly start: Fraction;
+  /** where it ends, from the section's start: its start and length added */
+  readonly end: Fraction;
   readonly length: Fraction;
   readonly instrument: string | null;
   readonly assigned?: readonly string[];

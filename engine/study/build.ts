@@ -1,11 +1,12 @@
 import { EngineError } from '../errors';
 import { type Fraction, ZERO, formatFraction, toFraction } from '../exact/fraction';
+import type { Grid } from '../exact/grid';
 import type { Placed } from '../process/types';
 import { parseMetre } from '../rhythm/metre';
 import { parseTempo } from '../rhythm/tempo';
 import type { Value } from '../rhythm/types';
 import { metreOf } from '../views/measures';
-import { assembleLine, statementsOf } from './line';
+import { assembleLine, endOf, placesOf, statementsOf } from './line';
 import { locate } from './locate';
 import { findPalindrome } from './palindrome';
 import { type Study, type StudyInput, parseStudy } from './schema';
@@ -60,16 +61,37 @@ function untraced({ length, rest, accent, roll, sound }: Value): Value {
   return value;
 }
 
+type Untraced = Pick<Statement, 'rhythm' | 'origins'>;
+
+/** Rhythms made before: statements that share their values share their rhythm. */
+const untracedOf = new WeakMap<Placed['values'], Untraced>();
+
+function separate(values: Placed['values']): Untraced {
+  let known = untracedOf.get(values);
+  if (known === undefined) {
+    known = { rhythm: values.map(untraced), origins: values.map((value) => (value.rest ? null : value.origin)) };
+    untracedOf.set(values, known);
+  }
+  return known;
+}
+
 function toStatement(placed: Placed, section: string, index: number, sectionStart: Fraction): Statement {
-  const { values, start, ...rest } = placed;
+  const { rhythm, origins } = separate(placed.values);
   return {
     id: `${section}.${index}`,
     section,
     index,
-    ...rest,
-    start: sectionStart.add(start),
-    rhythm: values.map(untraced),
-    origins: values.map((value) => (value.rest ? null : value.origin)),
+    start: sectionStart.add(placed.start),
+    length: placed.length,
+    instrument: placed.instrument,
+    ...(placed.assigned === undefined ? {} : { assigned: placed.assigned }),
+    subject: placed.subject,
+    factor: placed.factor,
+    reading: placed.reading,
+    rotation: placed.rotation,
+    mirrored: placed.mirrored,
+    rhythm,
+    origins,
   };
 }
 
@@ -79,10 +101,10 @@ const ordinal = (study: Study, statement: Statement): string => {
   return `${what} ${statement.index + 1} of “${section.name}”`;
 };
 
-function refuseOverlaps(study: Study, instrument: string, name: string, own: readonly Statement[]): void {
+function refuseOverlaps(study: Study, name: string, own: readonly Statement[], places: Grid): void {
   own.forEach((next, index) => {
     const before = own[index - 1];
-    if (before === undefined || before.start.add(before.length).compare(next.start) <= 0) return;
+    if (before === undefined || endOf(before, places) <= places.ticks(next.start)) return;
     throw new EngineError(
       'overlap',
       `${name} would have to play two things at once: ${ordinal(study, before)} and ${ordinal(study, next)}. Give one of them to another instrument, or let it enter later.`,
@@ -111,10 +133,11 @@ export function buildStudy(document: StudyInput): BuiltStudy {
     placed.forEach((one, index) => statements.push(toStatement(one, id, index, at)));
     at = at.add(length);
   }
+  const places = placesOf(statements, at);
   const lines = study.instruments.map(({ id, name }) => {
-    const own = statementsOf(statements, id);
-    refuseOverlaps(study, id, name, own);
-    return { instrument: id, rhythm: assembleLine(own, at).values };
+    const own = statementsOf(statements, id, places);
+    refuseOverlaps(study, name, own, places);
+    return { instrument: id, rhythm: assembleLine(own, at, places) };
   });
   const built = { sections, statements, lines, totalLength: at };
   return { ...built, palindrome: findPalindrome(study, built) };

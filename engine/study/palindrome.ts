@@ -95,6 +95,8 @@ function attacksSense(lines: readonly Named[], grid: Grid, place: Place): Palind
   const first = times.reduce((least, own) => Math.min(least, own[0] ?? Infinity), Infinity);
   const last = times.reduce((most, own) => Math.max(most, own.at(-1) ?? -Infinity), -Infinity);
   for (const [index, own] of times.entries()) {
+    // In order of time the first attack's partner is the last, and so on inwards.
+    if (own.every((at, n) => at + own[own.length - 1 - n]! === first + last)) continue;
     const set = new Set(own);
     const odd = own.find((at) => !set.has(first + last - at));
     if (odd !== undefined) {
@@ -118,10 +120,22 @@ function placeIn(study: Study, built: Extent): Place {
   };
 }
 
+/** Every length that stands in a line: those of the statements, each rhythm looked at once, and the places between them. */
+function lengthsOf({ statements, totalLength }: Omit<BuiltStudy, 'palindrome'>): Fraction[] {
+  const lengths = [totalLength];
+  const seen = new Set<Rhythm>();
+  for (const { start, length, rhythm } of statements) {
+    lengths.push(start, length);
+    if (seen.has(rhythm)) continue;
+    seen.add(rhythm);
+    for (const value of rhythm) lengths.push(value.length);
+  }
+  return lengths;
+}
+
 /** Whether a study is a palindrome, in each of the three senses; a failure names the first place. */
 export function findPalindrome(study: Study, built: Omit<BuiltStudy, 'palindrome'>): Palindrome {
-  const lengths = built.lines.flatMap(({ rhythm }) => rhythm.map((v) => v.length));
-  const grid = gridFor(lengths, built.totalLength.mul(2));
+  const grid = gridFor(lengthsOf(built), built.totalLength.mul(2));
   const place = placeIn(study, built);
   const named = built.lines.map((line, index) => ({ line, name: study.instruments[index]!.name }));
   return {

@@ -52,10 +52,7 @@ export class SectionBuilder {
           : section.lines.map((line, n) => this.line(section.id, line, `${path}.lines.${n}`));
     const under = (section.under ?? []).map((line, n) => this.line(section.id, line, `${path}.under.${n}`));
     const placed = [...main, ...under];
-    const length = placed.reduce((longest, { start, length: own }) => {
-      const end = start.add(own);
-      return end.compare(longest) > 0 ? end : longest;
-    }, ZERO);
+    const length = placed.reduce((longest, { end }) => (end.compare(longest) > 0 ? end : longest), ZERO);
     return { placed, length };
   }
 
@@ -96,12 +93,13 @@ export class SectionBuilder {
       if (!this.instruments.has(id)) throw unknownInstrument(id, { section: section.id, path: `${path}.instruments.${n}` });
     });
     const subject = this.subject(section.subject, { section: section.id, path: `${path}.subject` });
-    const prepared = locate({ path: `${path}.before` }, () => applySteps(subject, section.before ?? []));
+    const prepared = section.before?.length ? locate({ path: `${path}.before` }, () => applySteps(subject, section.before!)) : subject;
     const context = {
       section,
       process: section.process,
       path: where.path,
-      subject: prepared.map((value) => (value.rest ? { ...value, origin: null } : value)),
+      // A rotation by a pulse may leave the rest of a value, which is no attack any more.
+      subject: prepared === subject ? subject : prepared.map((value) => (value.rest ? { ...value, origin: null } : value)),
       instruments: section.instruments,
     };
     this.reserve(rules.size(context));
@@ -112,9 +110,11 @@ export class SectionBuilder {
     if (!this.instruments.has(line.instrument)) throw unknownInstrument(line.instrument, { section, path: `${path}.instrument` });
     const rhythm: Rhythm = locate({ path: `${path}.rhythm` }, () => parseRhythm(line.rhythm));
     this.reserve(rhythm.length);
+    const length = sum(rhythm.map((v) => v.length));
     return {
       start: ZERO,
-      length: sum(rhythm.map((v) => v.length)),
+      end: length,
+      length,
       instrument: line.instrument,
       subject: null,
       factor: ONE,
@@ -139,7 +139,8 @@ export class SectionBuilder {
         return {
           ...placed,
           ...assigned,
-          start: source.length.sub(placed.start).sub(placed.length),
+          start: source.length.sub(placed.end),
+          end: source.length.sub(placed.start),
           mirrored: !placed.mirrored,
           values: retrograde(placed.values, by),
         };

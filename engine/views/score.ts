@@ -5,7 +5,7 @@ import { canSpell, spellLine } from '../notation/spell-line';
 import { SpellingError } from '../notation/spelling-error';
 import type { MetrePlan, NotationMeasure } from '../notation/types';
 import type { Rhythm } from '../rhythm/types';
-import { type LineSource, assembleLine, statementsOf } from '../study/line';
+import { type LineSource, assembleLine, lineSources, placesOf, statementsOf } from '../study/line';
 import type { Instrument, Study } from '../study/schema';
 import type { BuiltStudy } from '../study/types';
 import { type PlannedMeasure, metrePlan, planMeasures } from './measures';
@@ -47,8 +47,11 @@ function explain(study: Study, measures: readonly PlannedMeasure[], plan: MetreP
 export function scoreOf(study: Study, built: BuiltStudy): Score {
   const plan = metrePlan(study, built);
   const measures = planMeasures(study, built);
+  const places = placesOf(built.statements, built.totalLength);
   const staves = study.instruments.map((instrument): Staff => {
-    const { values, sources } = assembleLine(statementsOf(built.statements, instrument.id), built.totalLength);
+    const own = statementsOf(built.statements, instrument.id, places);
+    const values = assembleLine(own, built.totalLength, places);
+    const sources = lineSources(own, built.totalLength, places);
     try {
       return { instrument, measures: spellLine(values, plan), values, sources };
     } catch (error) {
