@@ -2,6 +2,7 @@ import { cookies } from 'next/headers';
 import Link from 'next/link';
 import { LivingExample } from '@/components/home/living-example';
 import { StartStudy } from '@/components/home/start-study';
+import { PersonLinks } from '@/components/person-links';
 import { ThemeSwitch } from '@/components/ui/theme-switch';
 import { Wordmark } from '@/components/ui/wordmark';
 import { readPerson } from './person';
@@ -18,7 +19,7 @@ export default async function HomePage() {
         <nav aria-label="Main" className="ml-auto flex flex-wrap gap-x-6 gap-y-1 text-[15px] text-soft">
           <Link href="/studies">Studies</Link>
           <ThemeSwitch initial={theme} />
-          {person ? <span>{`${person.name} · ${person.role}`}</span> : <Link href="/sign-in">Sign in</Link>}
+          <PersonLinks person={person} />
         </nav>
       </header>
       <main className="mx-auto max-w-[1680px]">

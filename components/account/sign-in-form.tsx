@@ -1,16 +1,23 @@
 'use client';
 
 import { signIn } from 'next-auth/react';
-import { useRouter } from 'next/navigation';
 import { type FormEvent, useState } from 'react';
-import { Button } from './ui/button';
+import { Button } from '../ui/button';
+import { Field } from '../ui/field';
 
-const FIELD = 'mt-1 block w-full rounded border border-hair bg-paper px-3 py-2';
+const WORDS: Record<string, string> = {
+  CredentialsSignin: 'This e-mail address and password do not go together. Check both; after many attempts, wait a quarter of an hour.',
+  too_many_attempts: 'There were many attempts with this address. Wait a quarter of an hour, and try again.',
+  unavailable: 'Sesqui cannot look this up at the moment. Try again shortly.',
+};
+const UNREACHED = 'Sesqui cannot be reached. Check the connection and try again.';
 
-/** E-mail and password. The answer never tells whether an address is known. */
-export function SignInForm() {
-  const router = useRouter();
-  const [error, setError] = useState<string | null>(null);
+/** Why signing in did not work, in words; the answer never tells whether an address is known. */
+export const signInWords = (code: string | null | undefined): string => WORDS[code ?? ''] ?? 'Signing in did not work. Try again.';
+
+/** E-mail and password. @param props.next - an address of ours, to go to afterwards */
+export function SignInForm({ next, error: given }: { next: string; error: string | null }) {
+  const [error, setError] = useState<string | null>(given);
   const [isBusy, setBusy] = useState(false);
   const send = async (event: FormEvent<HTMLFormElement>) => {
     event.preventDefault();
@@ -21,23 +28,18 @@ export function SignInForm() {
       password: String(form.get('password') ?? ''),
       redirect: false,
     }).catch(() => undefined);
-    setBusy(false);
     if (answer?.ok) {
-      router.push('/studies');
-      router.refresh();
-    } else if (answer === undefined) setError('Sesqui cannot be reached. Check the connection and try again.');
-    else setError('This e-mail address and password do not go together. Check both; after many attempts, wait a quarter of an hour.');
+      // A whole new page: nothing of what nobody, or somebody else, has seen stays in memory.
+      window.location.assign(next);
+      return;
+    }
+    setBusy(false);
+    setError(answer === undefined ? UNREACHED : signInWords(answer.error));
   };
   return (
     <form onSubmit={(event) => void send(event)} className="mt-6 grid max-w-96 gap-4">
-      <label>
-        E-mail
-        <input name="email" type="email" required autoComplete="username" className={FIELD} />
-      </label>
-      <label>
-        Password
-        <input name="password" type="password" required autoComplete="current-password" className={FIELD} />
-      </label>
+      <Field label="E-mail" name="email" type="email" required autoComplete="username" />
+      <Field label="Password" name="password" type="password" required autoComplete="current-password" />
       {error && (
         <p role="alert" className="text-mark">
           {error}

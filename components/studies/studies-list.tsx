@@ -8,6 +8,9 @@ import { beginStudy } from '@/lib/client/new-study';
 import { type DraftEntry, isLocal, listDrafts } from '@/lib/client/study-draft';
 import { studyListQuery } from '@/lib/client/studies-queries';
 import { Button } from '../ui/button';
+import { PageHeading } from '../ui/page-heading';
+import { OwnStudies } from './own-studies';
+import { StudyRow } from './study-row';
 
 const NONE: DraftEntry[] = [];
 let known: { text: string; entries: DraftEntry[] } = { text: '[]', entries: NONE };
@@ -27,8 +30,8 @@ function subscribe(listener: () => void): () => void {
 
 const ROW = 'block border-b border-hair py-3.5 hover:bg-wash';
 
-/** The demo studies, and what this browser keeps. */
-export function StudiesList() {
+/** One's own studies, what this browser keeps, and the demo studies. */
+export function StudiesList({ isSignedIn }: { isSignedIn: boolean }) {
   const router = useRouter();
   const { data, error, isPending, refetch } = useQuery(studyListQuery());
   const own = useSyncExternalStore(subscribe, drafts, () => NONE);
@@ -41,20 +44,20 @@ export function StudiesList() {
   };
   return (
     <main className="mx-auto max-w-[1100px] px-5 pb-20 pt-10 sm:px-8">
-      <div className="flex flex-wrap items-end justify-between gap-4">
-        <h1 className="text-[40px] font-[560] leading-none tracking-[-0.02em] [font-stretch:112%]">Studies</h1>
+      <PageHeading text="Studies">
         <Button kind="strong" onClick={begin}>
           Start a study
         </Button>
-      </div>
+      </PageHeading>
       {problem && (
         <p role="alert" className="mt-3 text-mark">
           This browser does not let a study be kept: its storage is full or closed. Make room, or allow storage for this page, and try again.
         </p>
       )}
-      <h2 className="mt-10 border-b border-ink pb-1.5 text-[15px] font-semibold">Kept in this browser</h2>
+      {isSignedIn && <OwnStudies />}
+      {(!isSignedIn || own.length > 0) && <h2 className="mt-10 border-b border-ink pb-1.5 text-[15px] font-semibold">Kept in this browser</h2>}
       {own.length === 0 ? (
-        <p className="py-3.5 text-soft">Nothing yet. What you start or change without an account is kept here.</p>
+        !isSignedIn && <p className="py-3.5 text-soft">Nothing yet. What you start or change without an account is kept here.</p>
       ) : (
         <ul role="list">
           {own.map(({ id, title, changedAt }) => (
@@ -82,12 +85,7 @@ export function StudiesList() {
       )}
       <ul role="list">
         {data?.map((study) => (
-          <li key={study.id}>
-            <Link href={`/studies/${study.slug ?? study.id}`} className={ROW}>
-              <span className="text-[17px] font-semibold">{study.title}</span>
-              <span className="mt-0.5 block max-w-[80ch] font-serif text-[17px] text-soft">{study.summary}</span>
-            </Link>
-          </li>
+          <StudyRow key={study.id} study={study} note={<span className="block max-w-[80ch] font-serif text-[17px]">{study.summary}</span>} />
         ))}
       </ul>
     </main>

@@ -1,6 +1,7 @@
 'use client';
 
 import { createContext, useContext } from 'react';
+import type { ValueNames } from '@/engine';
 import type { Edit } from '@/lib/client/study-edits';
 import type { EditorSnapshot, StudyEditor } from '@/lib/client/study-editor';
 import type { Place } from '@/lib/client/place';
@@ -39,3 +40,7 @@ export function useStudy(): StudyContextValue {
 export function attempt(editor: StudyEditor, edit: () => Edit): string | null {
   return editor.edit((study) => edit()(study))?.message ?? null;
 }
+
+/** How the reader calls values: quarter note or crotchet. */
+export const ValueNamesContext = createContext<ValueNames>('american');
+export const useValueNames = (): ValueNames => useContext(ValueNamesContext);

@@ -6,11 +6,12 @@ import { useState, useSyncExternalStore } from 'react';
 import type { Study } from '@/engine';
 import { createStudyMutation } from '@/lib/client/studies-mutations';
 import { studyQuery } from '@/lib/client/studies-queries';
-import { differencesOf } from '@/lib/client/study-differences';
 import type { StudyEditor } from '@/lib/client/study-editor';
 import type { SaveState, StudySaver } from '@/lib/client/study-saver';
 import { studyResponse } from '@/lib/schemas/studies';
 import { Button, TextButton } from '../ui/button';
+import { DifferencesTable } from './differences-table';
+import { VersionsPanel } from './versions-panel';
 
 const clock = (at: Date): string => at.toLocaleTimeString([], { hour: '2-digit', minute: '2-digit', hourCycle: 'h23' });
 
@@ -85,28 +86,7 @@ function Conflict({ editor, saver, id }: { editor: StudyEditor; saver: StudySave
         </Button>
       ) : (
         <>
-          <div className="mt-3 overflow-x-auto">
-            <table className="w-full min-w-[560px] text-left align-top">
-              <thead>
-                <tr className="text-[13px] text-soft">
-                  <th className="pb-1 font-normal">What differs</th>
-                  <th className="pb-1 font-normal">Here</th>
-                  <th className="pb-1 font-normal">{`There, version ${theirs.version}, ${clock(theirs.updatedAt)}`}</th>
-                </tr>
-              </thead>
-              <tbody>
-                {differencesOf(mine, theirs.document).map(({ what, mine: own, theirs: other }) => (
-                  <tr key={what} className="border-t border-hair align-top">
-                    <th scope="row" className="py-1.5 pr-4 font-semibold">
-                      {what}
-                    </th>
-                    <td className="max-w-[44ch] py-1.5 pr-4 [overflow-wrap:anywhere]">{own}</td>
-                    <td className="max-w-[44ch] py-1.5 [overflow-wrap:anywhere]">{other}</td>
-                  </tr>
-                ))}
-              </tbody>
-            </table>
-          </div>
+          <DifferencesTable mine={mine} theirs={theirs.document} heading={`There, version ${theirs.version}, ${clock(theirs.updatedAt)}`} />
           <div className="mt-3 flex flex-wrap gap-3">
             <Button kind="strong" disabled={isBusy} onClick={() => void keepMine()}>
               {`Go on with this one, as version ${theirs.version + 1}`}
@@ -130,6 +110,7 @@ function Conflict({ editor, saver, id }: { editor: StudyEditor; saver: StudySave
 export function SavingLine({ editor, saver, id }: { editor: StudyEditor; saver: StudySaver; id: string }) {
   const state = useSyncExternalStore(editor.subscribe, editor.getSnapshot, editor.getSnapshot);
   const saving = useSyncExternalStore(saver.subscribe, saver.getState, saver.getState);
+  const [isListed, setListed] = useState(false);
   const isTrouble = saving.kind !== 'saved' && saving.kind !== 'saving';
   return (
     <>
@@ -149,7 +130,11 @@ export function SavingLine({ editor, saver, id }: { editor: StudyEditor; saver: 
         <TextButton disabled={!state.canRedo} onClick={() => editor.redo()}>
           Redo
         </TextButton>
+        <TextButton aria-expanded={isListed} onClick={() => setListed(!isListed)}>
+          Versions
+        </TextButton>
       </div>
+      {isListed && <VersionsPanel editor={editor} id={id} saved={editor.version} />}
       {saving.kind === 'conflict' && <Conflict editor={editor} saver={saver} id={id} />}
     </>
   );

@@ -4,7 +4,7 @@ import Link from 'next/link';
 import { type ReactNode, useEffect, useMemo, useState, useSyncExternalStore } from 'react';
 import { describeSection } from '@/engine';
 import { DRAWN_MARK, type StudyEditor as Editor } from '@/lib/client/study-editor';
-import { type Selection, StudyContext, type StudyContextValue, subjectOf } from './context';
+import { type Selection, StudyContext, type StudyContextValue, subjectOf, useValueNames } from './context';
 import { FormStrip } from './form-strip';
 import { InstrumentsPanel } from './instruments-panel';
 import { ScorePanel } from './score-panel';
@@ -51,6 +51,7 @@ function useFlush(editor: Editor) {
 export function StudyEditorView({ editor, status }: { editor: Editor; status: ReactNode }) {
   const state = useSyncExternalStore(editor.subscribe, editor.getSnapshot, editor.getSnapshot);
   const [chosen, setChosen] = useState<Selection>({ section: state.study.sections[0]!.id, statement: null, origin: null });
+  const valueNames = useValueNames();
   useHistoryKeys(editor);
   useFlush(editor);
 
@@ -106,7 +107,7 @@ export function StudyEditorView({ editor, status }: { editor: Editor; status: Re
         <StatementTable />
         <InstrumentsPanel />
         <p className="sr-only" aria-live="polite">
-          {describeSection(state.study, selection.section)}
+          {describeSection(state.study, selection.section, { valueNames })}
         </p>
         <p className="mt-10 text-[13.5px] text-soft">
           <Link href="/studies" className="underline underline-offset-[3px]">

@@ -6,13 +6,14 @@ import { useState } from 'react';
 import { setMetre, setTempo, setTitle } from '@/lib/client/study-edits';
 import { Token } from '../ui/token';
 import { TryField } from '../ui/try-field';
-import { attempt, useStudy } from './context';
+import { attempt, useStudy, useValueNames } from './context';
 
 const BEATS = ['1/2', '3/4', '1/4', '3/8', '1/8', '3/16', '1/16'];
 
 function TempoControl({ close }: { close: () => void }) {
   const { editor, state } = useStudy();
   const { tempo } = state.study;
+  const valueNames = useValueNames();
   const [beat, setBeat] = useState(formatFraction(toFraction(tempo.beat)));
   const beats = BEATS.includes(beat) ? BEATS : [beat, ...BEATS];
   return (
@@ -22,7 +23,7 @@ function TempoControl({ close }: { close: () => void }) {
         <select value={beat} onChange={(event) => setBeat(event.target.value)} className="w-full rounded border border-hair bg-paper px-2.5 py-1.5">
           {beats.map((one) => (
             <option key={one} value={one}>
-              {valueName(toFraction(one))}
+              {valueName(toFraction(one), valueNames)}
             </option>
           ))}
         </select>
@@ -44,6 +45,7 @@ const FACT = 'font-semibold! text-[1em]! border-b!';
 export function StudyHead() {
   const { editor, state } = useStudy();
   const { study, built } = state;
+  const valueNames = useValueNames();
   const sum = studySum(study, built);
   const seconds = clockOf(study, built).total;
   const metres = studyMetres(study);
@@ -69,7 +71,7 @@ export function StudyHead() {
           </Token>
           {metres.length > 1 && `, also ${metres.filter((metre) => metre !== study.metre).join(', ')}`}
         </span>
-        <Token text={tempoWords(study.tempo)} label="Tempo" className={`${FACT} text-ink`}>
+        <Token text={tempoWords(study.tempo, { valueNames })} label="Tempo" className={`${FACT} text-ink`}>
           {(close) => <TempoControl close={close} />}
         </Token>
         <b className="font-semibold text-ink">{formatClock(seconds)}</b>

@@ -4,7 +4,7 @@ import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import Link from 'next/link';
 import { useRouter } from 'next/navigation';
 import { type ReactNode, useEffect, useState } from 'react';
-import { EngineError, type StudyInput } from '@/engine';
+import { EngineError, type StudyInput, type ValueNames } from '@/engine';
 import { moveDraft } from '@/lib/client/move-drafts';
 import { createStudyMutation, saveStudyMutation } from '@/lib/client/studies-mutations';
 import { studyQuery } from '@/lib/client/studies-queries';
@@ -13,6 +13,7 @@ import { StudyEditor, derive } from '@/lib/client/study-editor';
 import { StudySaver } from '@/lib/client/study-saver';
 import type { StudyItem } from '@/lib/schemas/studies';
 import { Button, TextButton } from '../ui/button';
+import { ValueNamesContext } from './context';
 import { KeptLine } from './kept-line';
 import { SavingLine } from './saving-line';
 import { StudyEditorView } from './study-editor';
@@ -213,9 +214,17 @@ function Local({ id }: { id: string }) {
   return <Open key={round} id={id} item={null} isSignedIn={false} onReload={() => setRound(round + 1)} />;
 }
 
-/** A study by its address: from the server with the browser's draft over it, or from this browser alone. */
-export function StudyPage({ id, isSignedIn }: { id: string; isSignedIn: boolean }) {
+function Addressed({ id, isSignedIn }: { id: string; isSignedIn: boolean }) {
   if (!isLocal(id)) return <Remote id={id} isSignedIn={isSignedIn} />;
   if (isSignedIn && readDraft(id).kind === 'draft') return <MoveThenOpen id={id} />;
   return <Local id={id} />;
+}
+
+/** A study by its address: from the server with the browser's draft over it, or from this browser alone. */
+export function StudyPage({ valueNames, ...study }: { id: string; isSignedIn: boolean; valueNames: ValueNames }) {
+  return (
+    <ValueNamesContext value={valueNames}>
+      <Addressed {...study} />
+    </ValueNamesContext>
+  );
 }

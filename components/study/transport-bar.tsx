@@ -5,7 +5,7 @@ import { Fraction, type Statement, clockOf, formatClock, measureAt, tempoOf, tem
 import type { PlayOptions, PlayerState, StudyPlayer } from '@/lib/client/player';
 import { PLAYER } from '@/lib/client/player';
 import { Button } from '../ui/button';
-import { useStudy } from './context';
+import { useStudy, useValueNames } from './context';
 import { HearingCaution } from './hearing';
 
 /** Where an attack of the subject comes in a statement, in whole notes from the study's start. */
@@ -73,6 +73,7 @@ function InstrumentsHeard({ player, playing }: { player: StudyPlayer; playing: P
 /** Play, stop, place, speed, loop, volume, and what is heard; always at the foot of the page. */
 export function TransportBar({ player, playing }: { player: StudyPlayer; playing: PlayerState }) {
   const { state, selection, place } = useStudy();
+  const valueNames = useValueNames();
   const { study, built, measures } = state;
   const clock = clockOf(study, built);
   const read = useSyncExternalStore(never, hasRead, () => true);
@@ -232,7 +233,7 @@ export function TransportBar({ player, playing }: { player: StudyPlayer; playing
             className="absolute inset-0 w-full cursor-pointer opacity-0 focus-visible:opacity-60"
           />
         </div>
-        <span className="hidden lg:inline">{tempoWords(tempoOf(study, study.sections.find(({ id }) => id === selection.section)!))}</span>
+        <span className="hidden lg:inline">{tempoWords(tempoOf(study, study.sections.find(({ id }) => id === selection.section)!), { valueNames })}</span>
         <label className="flex items-center gap-1.5">
           <span className="sr-only">Speed</span>
           <select

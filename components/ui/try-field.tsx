@@ -18,17 +18,26 @@ export function TryField({
   hint?: string;
   action?: string;
   wide?: boolean;
-  onTry: (text: string) => string | null;
+  onTry: (text: string) => string | null | Promise<string | null>;
   onDone: () => void;
 }) {
   const [text, setText] = useState(initial);
   const [error, setError] = useState<string | null>(null);
+  const [isBusy, setBusy] = useState(false);
   const id = useId();
+  const settle = (answer: string | null) => {
+    setError(answer);
+    if (answer === null) onDone();
+  };
   const send = (event: FormEvent) => {
     event.preventDefault();
     const answer = onTry(text);
-    setError(answer);
-    if (answer === null) onDone();
+    if (!(answer instanceof Promise)) return settle(answer);
+    setBusy(true);
+    void answer.then((late) => {
+      setBusy(false);
+      settle(late);
+    });
   };
   return (
     <form onSubmit={send} className="block">
@@ -49,7 +58,7 @@ export function TryField({
           }}
           className={`min-w-0 rounded border border-hair bg-paper px-2.5 py-1.5 aria-invalid:border-mark ${wide ? 'w-64' : 'w-40'}`}
         />
-        <Button type="submit" className="px-3! py-1.5!">
+        <Button type="submit" className="px-3! py-1.5!" disabled={isBusy}>
           {action}
         </Button>
       </span>

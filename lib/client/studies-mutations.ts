@@ -1,6 +1,6 @@
 import { mutationOptions } from '@tanstack/react-query';
 import type { StudyInput } from '@/engine';
-import { studyResponse } from '../schemas/studies';
+import { studyListItemResponse, studyResponse } from '../schemas/studies';
 import { sendJson } from './get-json';
 import type { SaveRequest, Saved } from './study-saver';
 
@@ -26,4 +26,35 @@ export const createStudyMutation = () =>
     },
     networkMode: 'always',
     retry: false,
+  });
+
+const path = (id: string, rest = ''): string => `/api/studies/${encodeURIComponent(id)}${rest}`;
+
+/** Another title, which is a new version on top of `baseVersion`. */
+export const renameStudyMutation = () =>
+  mutationOptions({
+    mutationKey: ['studies', 'rename'],
+    mutationFn: async ({ id, title, baseVersion }: { readonly id: string; readonly title: string; readonly baseVersion: number }) =>
+      studyResponse.parse(await sendJson(path(id), { method: 'PATCH', body: { title, baseVersion } })).study,
+  });
+
+/** A new study of the reader's own, from one of theirs or a demonstration. */
+export const copyStudyMutation = () =>
+  mutationOptions({
+    mutationKey: ['studies', 'copy'],
+    mutationFn: async ({ id, saveId }: { readonly id: string; readonly saveId: string }) =>
+      studyResponse.parse(await sendJson(path(id, '/copy'), { method: 'POST', body: { saveId } })).study,
+  });
+
+/** Throws a study away; it can be restored for a while. */
+export const deleteStudyMutation = () =>
+  mutationOptions({
+    mutationKey: ['studies', 'delete'],
+    mutationFn: async ({ id }: { readonly id: string }) => studyListItemResponse.parse(await sendJson(path(id), { method: 'DELETE' })).study,
+  });
+
+export const restoreStudyMutation = () =>
+  mutationOptions({
+    mutationKey: ['studies', 'restore'],
+    mutationFn: async ({ id }: { readonly id: string }) => studyListItemResponse.parse(await sendJson(path(id, '/restore'), { method: 'POST' })).study,
   });

@@ -1,16 +1,16 @@
-import { type Study, clockOf, buildStudy, describeSection, formatClock, tempoWords } from '@/engine';
+import { type Study, type ValueNames, clockOf, buildStudy, describeSection, formatClock, tempoWords } from '@/engine';
 
 /** Something that differs between two versions of a study, in words. */
 export type Difference = { readonly what: string; readonly mine: string; readonly theirs: string };
 
 const NOTHING = 'not there';
 
-function sectionWords(study: Study, id: string): string {
+function sectionWords(study: Study, id: string, valueNames: ValueNames): string {
   const section = study.sections.find((one) => one.id === id);
   if (!section) return NOTHING;
   const lines = section.kind === 'free' ? section.lines.map(({ instrument, rhythm }) => `${instrument}: ${rhythm}`) : [];
   const under = (section.under ?? []).map(({ instrument, rhythm }) => `under it, ${instrument}: ${rhythm}`);
-  return [`${section.name}: ${describeSection(study, id)}`, ...lines, ...under].join(' ');
+  return [`${section.name}: ${describeSection(study, id, { valueNames })}`, ...lines, ...under].join(' ');
 }
 
 function byId<T extends { id: string }>(mine: readonly T[], theirs: readonly T[], what: (item: T) => string, words: (item: T) => string): Difference[] {
@@ -26,18 +26,18 @@ const order = (items: readonly { id: string; name: string }[]): string => items.
 const length = (study: Study): string => formatClock(clockOf(study, buildStudy(study)).total);
 
 /** What differs between two versions of a study, in the order in which a reader would ask. */
-export function differencesOf(mine: Study, theirs: Study): Difference[] {
+export function differencesOf(mine: Study, theirs: Study, valueNames: ValueNames = 'american'): Difference[] {
   const simple = (what: string, words: (study: Study) => string): Difference[] =>
     words(mine) === words(theirs) ? [] : [{ what, mine: words(mine), theirs: words(theirs) }];
   const sections = [...new Set([...mine.sections, ...theirs.sections].map(({ id }) => id))].flatMap((id) => {
-    const [own, other] = [sectionWords(mine, id), sectionWords(theirs, id)];
+    const [own, other] = [sectionWords(mine, id, valueNames), sectionWords(theirs, id, valueNames)];
     const name = [...mine.sections, ...theirs.sections].find((one) => one.id === id)!.name;
     return own === other ? [] : [{ what: `Section “${name}”`, mine: own, theirs: other }];
   });
   const found = [
     ...simple('Title', ({ title }) => title),
     ...simple('Metre', ({ metre }) => metre),
-    ...simple('Tempo', ({ tempo }) => tempoWords(tempo)),
+    ...simple('Tempo', ({ tempo }) => tempoWords(tempo, { valueNames })),
     ...byId(mine.subjects, theirs.subjects, ({ name }) => `Subject “${name}”`, ({ name, rhythm }) => `${name}: ${rhythm}`),
     ...sections,
     ...simple('Order of sections', (study) => order(study.sections)),

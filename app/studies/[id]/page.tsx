@@ -6,5 +6,6 @@ export const metadata: Metadata = { title: 'Study' };
 
 export default async function StudyPage({ params }: { params: Promise<{ id: string }> }) {
   const { id } = await params;
-  return <StudyLoader id={decodeURIComponent(id)} isSignedIn={(await readPerson()) !== null} />;
+  const person = await readPerson();
+  return <StudyLoader id={decodeURIComponent(id)} isSignedIn={person !== null} valueNames={person?.valueNames ?? 'american'} />;
 }
