@@ -28,7 +28,7 @@ type Changes = Partial<Pick<Account, 'name' | 'valueNames' | 'paperSize'>>;
 function useChange() {
   const client = useQueryClient();
   const router = useRouter();
-  const { mutate, isPending, error } = useMutation(updateAccountMutation());
+  const { mutate, isPending, error, variables } = useMutation(updateAccountMutation());
   const [done, setDone] = useState<string | null>(null);
   const change = (changes: Changes, words: string) => {
     setDone(null);
@@ -41,7 +41,7 @@ function useChange() {
       },
     });
   };
-  return { change, isPending, done, errors: error ? errorsOfAnswer(error) : {} };
+  return { change, isPending, done, sent: isPending ? variables : undefined, errors: error ? errorsOfAnswer(error) : {} };
 }
 
 const Done = ({ text }: { text: string | null }) => (
@@ -82,11 +82,13 @@ function Choice<K extends 'valueNames' | 'paperSize'>({
   options: readonly (readonly [Account[K], string])[];
   words: Record<Account[K], string>;
 }) {
-  const { change, done, errors } = useChange();
+  const { change, done, sent, errors } = useChange();
+  // What has been chosen shows at once; a refusal takes it back.
+  const value = { ...account, ...sent }[field];
   return (
     <>
-      <Segments label={label} value={account[field]} options={options} onChange={(value) => change({ [field]: value } as Changes, 'Kept.')} />
-      <p className="mt-2 text-[14px] text-soft">{words[account[field]]}</p>
+      <Segments label={label} value={value} options={options} onChange={(value) => change({ [field]: value } as Changes, 'Kept.')} />
+      <p className="mt-2 text-[14px] text-soft">{words[value]}</p>
       {Object.values(errors)[0] && (
         <p role="alert" className="mt-1 text-[13.5px] text-mark">
           {Object.values(errors)[0]}

@@ -9,7 +9,7 @@ function sectionWords(study: Study, id: string, valueNames: ValueNames): string 
   const section = study.sections.find((one) => one.id === id);
   if (!section) return NOTHING;
   const lines = section.kind === 'free' ? section.lines.map(({ instrument, rhythm }) => `${instrument}: ${rhythm}`) : [];
-  const under = (section.under ?? []).map(({ instrument, rhythm }) => `under it, ${instrument}: ${rhythm}`);
+  const under = (section.under ?? []).map(({ instrument, rhythm }) => `Under it, ${instrument}: ${rhythm}`);
   return [`${section.name}: ${describeSection(study, id, { valueNames })}`, ...lines, ...under].join(' ');
 }
 

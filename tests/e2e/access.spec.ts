@@ -1,7 +1,7 @@
 import fs from 'node:fs';
 import type { Page } from '@playwright/test';
 import { expect, test } from '../helpers/browser';
-import { drawnScore, openStudy, word } from './open';
+import { drawnScore, openStudy, signIn, word } from './open';
 
 const axe = fs.readFileSync('node_modules/axe-core/axe.min.js', 'utf8');
 
@@ -21,7 +21,7 @@ async function violations(page: Page): Promise<string[]> {
 for (const scheme of ['light', 'dark'] as const) {
   test(`no violation that can be found by machine, ${scheme}`, async ({ page }) => {
     await page.emulateMedia({ colorScheme: scheme, reducedMotion: 'reduce' });
-    for (const path of ['/', '/studies', '/sign-in']) {
+    for (const path of ['/', '/studies', '/sign-in', '/register']) {
       await page.goto(path);
       await page.waitForLoadState('networkidle');
       expect(await violations(page), path).toEqual([]);
@@ -33,5 +33,16 @@ for (const scheme of ['light', 'dark'] as const) {
     }
     await word(page, 'Factors').click();
     expect(await violations(page), 'an open word').toEqual([]);
+  });
+
+  test(`nor on the pages of an account, ${scheme}`, async ({ page }) => {
+    await page.emulateMedia({ colorScheme: scheme, reducedMotion: 'reduce' });
+    await signIn(page, 'administrator');
+    await page.request.post('/api/studies/footbridge/copy', { data: {}, headers: { origin: new URL(page.url()).origin } });
+    for (const path of ['/studies', '/account', '/people']) {
+      await page.goto(path);
+      await page.waitForLoadState('networkidle');
+      expect(await violations(page), path).toEqual([]);
+    }
   });
 }

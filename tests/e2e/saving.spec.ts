@@ -124,3 +124,18 @@ test('a demonstration is kept as one’s own by a word', async ({ page }) => {
   await expect(page).toHaveURL(/\/studies\/[0-9a-f]{8}-/);
   await expect(saving(page)).toHaveText(SAVED);
 });
+
+test('every save is kept: a version is looked at, and gone back to', async ({ page }) => {
+  await beginOwn(page);
+  await setWord(page, 'Factors', '1, 2');
+  await expect(saving(page)).toHaveText(/version 2$/);
+  await page.getByRole('button', { name: 'Versions' }).click();
+  await page.getByRole('button', { name: 'What differs from version 1' }).click();
+  await expect(page.getByRole('row', { name: /Section “Filling”/ })).toContainText('at 1, 5/4, 3/2, 2 times');
+  await page.getByRole('button', { name: 'Go back to version 1' }).click();
+  await expect(sentence(page)).toContainText('at 1, 5/4, 3/2, 2 times its length');
+  await expect(saving(page)).toHaveText(/version 3$/);
+  await expect(page.getByText('Version 3', { exact: true })).toBeVisible();
+  await page.getByRole('button', { name: 'Undo' }).click();
+  await expect(sentence(page)).toContainText('at 1, 2 times its length');
+});

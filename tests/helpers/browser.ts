@@ -24,4 +24,10 @@ export const test = base.extend<{ complaints: string[] }>({
   ],
 });
 
+/** Forgets what the browser says of answers that refuse, which a test has asked for on purpose. */
+export function forgetRefusals(complaints: string[]): void {
+  const others = complaints.filter((line) => !/the server responded with a status of 4\d\d/.test(line));
+  complaints.splice(0, complaints.length, ...others);
+}
+
 export { expect };
