@@ -1,6 +1,6 @@
 export { EngineError, RhythmTextError, type EngineErrorCode } from './errors';
 export { LIMITS } from './limits';
-export { Fraction, formatFraction, toFraction, toFactor, type Exact } from './exact/fraction';
+export { Fraction, formatFraction, isFactor, toFraction, toFactor, type Exact } from './exact/fraction';
 
 export type { Reading, RetrogradeBy, Rhythm, Value } from './rhythm/types';
 export { parseRhythm } from './rhythm/parse';

@@ -1,4 +1,4 @@
-import { type Fraction, formatFraction, sum, toFraction } from '../exact/fraction';
+import { type Fraction, formatFraction, isFactor, sum } from '../exact/fraction';
 import { proportionFactors } from '../process/proportion';
 import { ladder } from '../proportion/ladder';
 import { parseMetre } from '../rhythm/metre';
@@ -60,18 +60,23 @@ export type Remark = {
   readonly mend?: { readonly label: string; readonly factors: readonly string[]; readonly ratio?: string };
 };
 
+const MOST_STEPS_SHOWN = 8;
+
 function stepsRemark(factors: readonly Fraction[]): Remark | null {
   if (factors.length < 3) return null;
   const { steps, equalSteps } = ladder(factors);
   const first = steps[0]!;
   if (equalSteps || first.equals(1)) return null;
+  const broken = steps.findIndex((step) => !step.equals(first));
   const shown = steps.map(formatFraction);
-  const power = factors.map((_, index) => formatFraction(first.pow(index)!));
-  return {
-    code: 'unequal-steps',
-    text: `Each statement is ${shown.slice(0, -1).join(', ')}, then ${shown.at(-1)} of the one before it: the steps are not equal.`,
-    mend: { label: 'Make every step equal', factors: power.map((factor) => formatFraction(toFraction(factor).mul(factors[0]!))), ratio: formatFraction(first) },
-  };
+  const text =
+    steps.length <= MOST_STEPS_SHOWN
+      ? `Each statement is ${shown.slice(0, -1).join(', ')}, then ${shown.at(-1)} of the one before it: the steps are not equal.`
+      : `Each statement is ${shown[0]} of the one before it up to statement ${broken + 1}; statement ${broken + 2} is ${shown[broken]}: the steps are not equal.`;
+  const equal = factors.map((_, index) => first.pow(index)!.mul(factors[0]!));
+  // Many steps grow or shrink beyond what can be typed: then nothing is offered.
+  if (!equal.every(isFactor)) return { code: 'unequal-steps', text };
+  return { code: 'unequal-steps', text, mend: { label: 'Make every step equal', factors: equal.map(formatFraction), ratio: formatFraction(first) } };
 }
 
 /** The factor nearest to `factor` at which a statement of `once` lasts whole measures, at least one. */
@@ -92,6 +97,7 @@ function endRemark(study: Study, section: Section, statements: readonly Statemen
     const factor = factors[index];
     if (factor === undefined || within(statement.start).n !== 0n) return { code: 'ends-inside', text, statement: index };
     const mended = wholeFactor(factor, statement.length.div(factor), measure);
+    if (!isFactor(mended)) return { code: 'ends-inside', text, statement: index };
     const next = factors.map((one, n) => formatFraction(n === index ? mended : one));
     return { code: 'ends-inside', text, statement: index, mend: { label: `Make it ${measureWords(statement.length.div(factor).mul(mended), metre)}, at ${formatFraction(mended)}`, factors: next } };
   }

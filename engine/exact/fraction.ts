@@ -111,6 +111,12 @@ function checkFactor(input: Exact): Fraction {
   return factor;
 }
 
+/** Whether a fraction that was worked out could be typed as a factor. */
+export function isFactor(value: Fraction): boolean {
+  const { factor, fractionTerm } = LIMITS;
+  return value.s > 0n && value.n <= BigInt(fractionTerm) && value.d <= BigInt(fractionTerm) && value.compare(factor) <= 0 && value.mul(factor).compare(1) >= 0;
+}
+
 /** Canonical text: lowest terms, `n/d`, or `n` where whole. */
 export const formatFraction = (value: Fraction): string =>
   value.d === 1n ? String(value.s * value.n) : `${value.s * value.n}/${value.d}`;

@@ -11,6 +11,7 @@ import {
   type StudyInput,
   formatFraction,
   proportionFactors,
+  isFactor,
   toFactor,
   toFraction,
 } from '@/engine';
@@ -63,6 +64,7 @@ export const setCount = (id: string, count: number): Edit => {
     let next = last;
     while (factors.length < count) {
       next = next.mul(step);
+      if (!isFactor(next)) throw new EngineError('invalid_factor', `Going on by ${formatFraction(step)}, statement ${factors.length + 1} would be out of reach. Write the factors instead.`);
       factors.push(next);
     }
     return { ...process, factors: factors.slice(0, count).map(formatFraction) };

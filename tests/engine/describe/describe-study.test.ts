@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
-  EngineError, Fraction, type StudyInput, buildStudy, describeContext, describeSection, describeStatement, describeStudy, parseStudy, toFraction,
+  EngineError, Fraction, type StudyInput, buildStudy, describeContext, describeSection, describeStatement, describeStudy, parseStudy, sectionRemarks, toFactor, toFraction,
 } from '@/engine';
 import { arbitraryFactor, arbitraryLength } from '../rhythm/arbitrary-rhythm';
 import { free, mirror, stating, study } from '../study/make-study';
@@ -166,5 +166,38 @@ describe('describeStatement', () => {
       'Statement 1 of 2, block: at 2 times its length, backwards by values, then mirrored, rotated by 1 value, 3 attacks, 2 measures long, measures 4 to 5, from 0′12″ to 0′20″.',
       'Statement 2 of 2, bell: at its own length, forwards, then mirrored, 3 attacks, 1 measure long, measure 6, from 0′20″ to 0′24″.',
     ]);
+  });
+});
+
+describe('a study that can be built can be described', () => {
+  it('thirty unequal steps: the steps that would mend them are out of reach, and none are offered', () => {
+    const document = parseStudy(study([stating({ factors: Array.from({ length: 30 }, (_, n) => ['1', '5/4', '3/2', '2'][n % 4]!) })]));
+    const [remark] = sectionRemarks(document, buildStudy(document), document.sections[0]!);
+    expect(remark).toEqual({
+      code: 'unequal-steps',
+      text: 'Each statement is 5/4 of the one before it up to statement 2; statement 3 is 6/5: the steps are not equal.',
+    });
+  });
+
+  const factor = fc.tuple(fc.integer({ min: 1, max: 999 }), fc.integer({ min: 1, max: 999 })).map(([n, d]) => `${n}/${d}`);
+  it('whatever its factors', () => {
+    fc.assert(
+      fc.property(fc.array(factor, { minLength: 1, maxLength: 40 }), (factors) => {
+        const document = parseStudy(study([stating({ factors }), mirror('m', 'a')]));
+        let built;
+        try {
+          built = buildStudy(document);
+        } catch (error) {
+          // Factors whose common denominator cannot be counted are refused when it is built.
+          expect(error).toBeInstanceOf(EngineError);
+          return;
+        }
+        expect(describeStudy(document)).toMatch(/^“Weir” has 2 sections/);
+        for (const { mend } of sectionRemarks(document, built, document.sections[0]!)) {
+          expect(() => mend?.factors.map((one) => toFactor(one))).not.toThrow();
+        }
+      }),
+      { numRuns: 200 },
+    );
   });
 });
