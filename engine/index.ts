@@ -39,6 +39,7 @@ export {
 export { buildStudy } from './study/build';
 export type { LineSource } from './study/line';
 export { proportionFactors } from './process/proportion';
+export { PROCESSES, processChoices, rulesOf, type ProcessKind } from './process/registry';
 export type { BuiltSection, BuiltStudy, Line, Palindrome, PalindromeSense, Statement } from './study/types';
 
 export { spellLine } from './notation/spell-line';
@@ -70,6 +71,7 @@ export {
   tempoWords,
   type DescribeContext,
 } from './describe/describe';
-export { readingWords, sectionSentence, type SentenceControl, type SentencePart } from './describe/sentence';
+export { sectionSentence } from './describe/sentence';
+export { readingWords, stepWords, type FieldControl, type FieldInput, type SentenceControl, type SentencePart } from './describe/sentence-parts';
 export { mirrorWords, sectionRemarks, sectionSum, studyMetres, studySum, sumWords, type Remark, type Sum } from './describe/sums';
 export { inSentence, measureNumber, measureWords, valueName, type DescribeOptions, type ValueNames } from './describe/words';

@@ -8,7 +8,7 @@ import { derive } from '@/lib/client/study-editor';
 import { tint } from '../study/family';
 import { type ThreadGeometry, rowY, threadPath, tickX } from '../study/thread-geometry';
 import { useWidth } from '../study/use-width';
-import { Choices } from '../study/sentence-controls';
+import { Choices } from '../study/choices';
 import { Token } from '../ui/token';
 
 const RATIOS = { '3/2': 'half as long again', '4/3': 'a third as long again', '5/4': 'a quarter as long again', '2': 'twice as long', '1/2': 'half as long' } as const;

@@ -3,8 +3,10 @@
 import type { ReactNode } from 'react';
 import { type Section, type SentenceControl, type SentencePart, sectionSentence } from '@/engine';
 import { Token } from '../ui/token';
+import { BeforeControl } from './before-control';
 import { useStudy } from './context';
 import { tint } from './family';
+import { FieldControl } from './field-control';
 import {
   type Close,
   CountControl,
@@ -13,12 +15,15 @@ import {
   InstrumentControl,
   MirrorByControl,
   MirrorOfControl,
+  OneReadingControl,
+  ProcessControl,
   ReadingControl,
   RotationsControl,
   SubjectControl,
 } from './sentence-controls';
 
-const LABELS: Record<SentenceControl['kind'], string> = {
+const LABELS: Record<Exclude<SentenceControl['kind'], 'field'>, string> = {
+  process: 'Process',
   subject: 'Subject',
   count: 'Number of statements',
   entries: 'Entries',
@@ -37,19 +42,29 @@ function Control({ section, control, close }: { section: Section; control: Sente
     return <InstrumentControl section={section} index={control.index} ids={ids} />;
   }
   if (section.kind === 'mirror') return control.kind === 'mirror-of' ? <MirrorOfControl section={section} /> : <MirrorByControl section={section} />;
-  if (section.kind !== 'process' || section.process.kind !== 'proportion') return null;
+  if (section.kind !== 'process') return null;
   const { process } = section;
   switch (control.kind) {
+    case 'process':
+      return <ProcessControl section={section} />;
     case 'subject':
       return <SubjectControl section={section} close={close} />;
+    case 'before':
+      return <BeforeControl section={section} />;
+    case 'entries':
+      return <EntriesControl section={section} entries={'entries' in process ? process.entries : undefined} close={close} />;
+    case 'field':
+      return <FieldControl section={section} control={control} close={close} />;
+    case 'reading':
+      if (process.kind === 'proportion') return <ReadingControl section={section} process={process} />;
+      return <OneReadingControl section={section} reading={'reading' in process ? process.reading : undefined} />;
+  }
+  if (process.kind !== 'proportion') return null;
+  switch (control.kind) {
     case 'count':
       return <CountControl section={section} process={process} close={close} />;
-    case 'entries':
-      return <EntriesControl section={section} process={process} close={close} />;
     case 'factors':
       return <FactorsControl section={section} process={process} close={close} />;
-    case 'reading':
-      return <ReadingControl section={section} process={process} />;
     case 'rotations':
       return <RotationsControl section={section} process={process} close={close} />;
     default:
@@ -60,10 +75,10 @@ function Control({ section, control, close }: { section: Section; control: Sente
 function Word({ part, section }: { part: SentencePart; section: Section }) {
   const { state } = useStudy();
   const { control, text } = part;
-  if (control === undefined || control.kind === 'before') return <>{text}</>;
+  if (control === undefined) return <>{text}</>;
   const colour = control.kind === 'instrument' ? { color: tint(state.study, control.instrument) } : undefined;
   return (
-    <Token text={text} label={LABELS[control.kind]} {...(colour ? { style: colour } : {})}>
+    <Token text={text} label={control.kind === 'field' ? control.label : LABELS[control.kind]} {...(colour ? { style: colour } : {})}>
       {(close) => <Control section={section} control={control} close={close} />}
     </Token>
   );
@@ -72,7 +87,7 @@ function Word({ part, section }: { part: SentencePart; section: Section }) {
 /** A word keeps its key, and so its open control, while the sentence about it grows or shrinks. */
 function keyOf(section: Section, { control }: SentencePart, index: number): string {
   if (control === undefined) return `${section.id} text ${index}`;
-  return `${section.id} ${control.kind}${control.kind === 'instrument' ? ` ${control.index}` : ''}`;
+  return `${section.id} ${control.kind}${control.kind === 'instrument' ? ` ${control.index}` : control.kind === 'field' ? ` ${control.field}` : ''}`;
 }
 
 /** The sentence of a section, its words the controls. */

@@ -5,6 +5,7 @@ import {
   type FreeSection,
   type Section,
   metreOf,
+  rulesOf,
   sectionRemarks,
   sectionSum,
 } from '@/engine';
@@ -20,6 +21,7 @@ import {
 import { Button, TextButton } from '../ui/button';
 import { Token } from '../ui/token';
 import { TryField } from '../ui/try-field';
+import { BeforeControl } from './before-control';
 import { attempt, useStudy } from './context';
 import { ProcessSentence } from './process-sentence';
 import { RhythmField } from './rhythm-field';
@@ -140,6 +142,11 @@ function SectionTools({ section }: { section: Section }) {
           </form>
         )}
       </Token>
+      {section.kind === 'process' && !section.before?.length && rulesOf(section.process).takesSubject && (
+        <Token text="First change the subject" label="What is done to the subject first" className="border-b! font-normal! text-[14px]!">
+          {() => <BeforeControl section={section} />}
+        </Token>
+      )}
       <TextButton disabled={index === 0} onClick={() => setError(attempt(editor, () => moveSection(section.id, -1)))}>
         Move earlier
       </TextButton>

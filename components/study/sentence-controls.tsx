@@ -13,6 +13,7 @@ import {
   measuresOf,
   metreOf,
   parseMetre,
+  processChoices,
   proportionFactors,
   readingWords,
   toFraction,
@@ -22,6 +23,8 @@ import {
   setEntries,
   setFactors,
   setMirror,
+  setProcessFields,
+  setProcessKind,
   setRatio,
   setReadings,
   setRotations,
@@ -31,41 +34,11 @@ import {
 } from '@/lib/client/study-edits';
 import { Button, TextButton } from '../ui/button';
 import { TryField } from '../ui/try-field';
+import { Choices, Refusal } from './choices';
 import { attempt, useStudy } from './context';
 
 export type Close = () => void;
 const SELECT = 'w-full rounded border border-hair bg-paper px-2.5 py-1.5';
-
-/** A sentence under a control that says why a change was refused. */
-function Refusal({ text }: { text: string | null }) {
-  return text === null ? null : (
-    <span role="alert" className="mt-2 block max-w-72 text-[13.5px] text-mark">
-      {text}
-    </span>
-  );
-}
-
-/** One of a few, as radio buttons: changes at once, stays open so that the effect can be compared. */
-export function Choices<T extends string>({ name, value, options, onTry }: {
-  name: string;
-  value: T;
-  options: readonly (readonly [T, string])[];
-  onTry: (value: T) => string | null;
-}) {
-  const [error, setError] = useState<string | null>(null);
-  return (
-    <fieldset>
-      <legend className="sr-only">{name}</legend>
-      {options.map(([option, text]) => (
-        <label key={option} className="flex cursor-pointer items-baseline gap-2.5 py-1">
-          <input type="radio" name={name} checked={option === value} onChange={() => setError(onTry(option))} className="accent-ink" />
-          {text}
-        </label>
-      ))}
-      <Refusal text={error} />
-    </fieldset>
-  );
-}
 
 export function CountControl({ section, process, close }: { section: ProcessSection; process: ProportionProcess; close: Close }) {
   const { editor } = useStudy();
@@ -123,10 +96,9 @@ export function FactorsControl({ section, process, close }: { section: ProcessSe
   );
 }
 
-export function EntriesControl({ section, process, close }: { section: ProcessSection; process: ProportionProcess; close: Close }) {
+export function EntriesControl({ section, entries = 'successive', close }: { section: ProcessSection; entries: Entries | undefined; close: Close }) {
   const { editor, state } = useStudy();
   const metre = metreOf(state.study, section);
-  const entries = process.entries ?? 'successive';
   const kind = typeof entries === 'string' ? entries : 'every';
   const [isEvery, setEvery] = useState(kind === 'every');
   const measures = typeof entries === 'string' ? '1' : formatFraction(measuresOf(entries.every, metre));
@@ -199,6 +171,32 @@ export function ReadingControl({ section, process }: { section: ProcessSection; 
       <span className="mt-2 block max-w-72 text-[13px] text-soft">By values, the lengths run backwards. By attacks, the gaps between attacks do.</span>
       <Refusal text={error} />
     </>
+  );
+}
+
+/** The one reading of a process. */
+export function OneReadingControl({ section, reading = 'forwards' }: { section: ProcessSection; reading: Reading | undefined }) {
+  const { editor } = useStudy();
+  return (
+    <Choices
+      name={`Reading of ${section.name}`}
+      value={reading}
+      options={READINGS.map((one) => [one, readingWords(one)] as const)}
+      onTry={(next) => attempt(editor, () => setProcessFields(section.id, { reading: next }))}
+    />
+  );
+}
+
+/** Which process the section is made by; another one begins afresh on the same subject. */
+export function ProcessControl({ section }: { section: ProcessSection }) {
+  const { editor } = useStudy();
+  return (
+    <Choices
+      name={`Process of ${section.name}`}
+      value={section.process.kind}
+      options={processChoices}
+      onTry={(kind) => attempt(editor, () => setProcessKind(section.id, kind))}
+    />
   );
 }
 

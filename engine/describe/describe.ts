@@ -5,7 +5,8 @@ import { type Section, type Study, type StudyInput, parseStudy } from '../study/
 import type { BuiltStudy, Palindrome, Statement } from '../study/types';
 import { type Clock, clockOf, formatClock, spokenClock } from '../views/clock';
 import { type PlannedMeasure, measureAt, metreOf, planMeasures, tempoOf } from '../views/measures';
-import { readingWords, sectionSentence } from './sentence';
+import { sectionSentence } from './sentence';
+import { readingWords, rotationWords } from './sentence-parts';
 import { sectionRemarks, sectionSum, studyMetres, studySum, sumWords } from './sums';
 import { type DescribeOptions, capital, inSentence, listWords, measureWords, plural, valueName } from './words';
 
@@ -98,7 +99,7 @@ export function describeStatement(context: DescribeContext, statement: Statement
   const details = [
     statement.factor.equals(1) ? 'at its own length' : `at ${formatFraction(statement.factor)} times its length`,
     readingWords(statement.reading) + (statement.mirrored ? ', then mirrored' : ''),
-    ...(statement.rotation === 0 ? [] : [`rotated by ${plural(statement.rotation, 'value')}`]),
+    ...(statement.rotation === 0 ? [] : [`rotated by ${rotationWords(statement.rotation, statement.rotationBy ?? 'values')}`]),
     attacks,
     long,
     where,

@@ -1,6 +1,6 @@
 import { EngineError } from '../errors';
 import { Fraction, ZERO, toFraction } from '../exact/fraction';
-import type { Entries } from '../study/schema';
+import type { Entries } from '../study/fields';
 
 export type Span = { readonly start: Fraction; readonly end: Fraction };
 

@@ -1,11 +1,29 @@
+import type { z } from 'zod';
 import type { Process } from '../study/schema';
+import { additive } from './additive';
+import { cycle } from './cycle';
+import { fillingIn } from './filling-in';
+import { phase } from './phase';
 import { proportion } from './proportion';
+import { resultantProcess } from './resultant';
+import { rotation } from './rotation';
 import type { ProcessRules } from './types';
 
-/** Every process that can be built, by kind: a new one is its file and one line here. */
-const registry: { readonly [K in Process['kind']]?: ProcessRules<Extract<Process, { kind: K }>> } = {
+/** Every process, by kind: a new one is its file and one line here. The order is that in which they are offered. */
+export const PROCESSES = {
   proportion,
-};
+  rotation,
+  phase,
+  additive,
+  'filling-in': fillingIn,
+  cycle,
+  resultant: resultantProcess,
+} as const;
 
-/** The rules of a process, or undefined where this version cannot build it. */
-export const rulesOf = (kind: Process['kind']): ProcessRules | undefined => registry[kind] as ProcessRules | undefined;
+export type ProcessKind = keyof typeof PROCESSES;
+
+/** The rules of a process. Its own type has been checked by the schema, which the kind has chosen. */
+export const rulesOf = ({ kind }: Pick<Process, 'kind'>) => PROCESSES[kind] as unknown as ProcessRules<z.ZodObject>;
+
+/** What may be chosen, in words. */
+export const processChoices: readonly (readonly [ProcessKind, string])[] = (Object.keys(PROCESSES) as ProcessKind[]).map((kind) => [kind, PROCESSES[kind].label]);

@@ -89,6 +89,8 @@ function toStatement(placed: Placed, section: string, index: number, sectionStar
     factor: placed.factor,
     reading: placed.reading,
     rotation: placed.rotation,
+    ...(placed.rotationBy === undefined ? {} : { rotationBy: placed.rotationBy }),
+    ...(placed.repeats === undefined || placed.repeats === 1 ? {} : { repeats: placed.repeats }),
     mirrored: placed.mirrored,
     rhythm,
     origins,

@@ -1,6 +1,7 @@
 import type { Fraction } from '../exact/fraction';
 import { type Grid, gridFor } from '../exact/grid';
 import type { Value } from '../rhythm/types';
+import { silenced } from '../transform/rotate';
 import type { Statement } from './types';
 
 /** Where a value of a line comes from; null for the rests between statements. */
@@ -13,10 +14,18 @@ export const placesOf = (statements: readonly Statement[], totalLength: Fraction
 /** Where a statement ends, in ticks from the study's start. */
 export const endOf = ({ start, length }: Statement, places: Grid): number => places.ticks(start) + places.ticks(length);
 
-/** The statements that an instrument plays, in order of time. */
+/** A statement that is shared out, as one of its instruments plays it: the others' attacks are rests. */
+function partOf(statement: Statement, instrument: string): Statement {
+  let attack = 0;
+  const rhythm = statement.rhythm.map((value) => (value.rest || statement.assigned![attack++] === instrument ? value : silenced(value)));
+  return { ...statement, rhythm };
+}
+
+/** The statements that an instrument plays, alone or with others, in order of time. */
 export const statementsOf = (statements: readonly Statement[], instrument: string, places: Grid): Statement[] =>
   statements
-    .filter((s) => s.instrument === instrument && s.rhythm.length > 0)
+    .filter((s) => (s.instrument === instrument || s.assigned?.includes(instrument)) && s.rhythm.length > 0)
+    .map((s) => (s.assigned === undefined ? s : partOf(s, instrument)))
     .sort((a, b) => places.ticks(a.start) - places.ticks(b.start));
 
 type Gap = { readonly rest: Fraction };

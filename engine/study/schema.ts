@@ -1,105 +1,12 @@
 import { z } from 'zod';
 import { EngineError } from '../errors';
 import { LIMITS } from '../limits';
+import { PROCESSES } from '../process/registry';
+import { exactText, id, metreText, name, rhythmText, stepSchema, tempoSchema } from './fields';
 
-/** An exact fraction as text; an integer is taken too, and kept as text. */
-const exactText = z
-  .union([z.string().min(1).max(LIMITS.fractionText), z.int()])
-  .transform(String);
-const id = z.string().min(1).max(LIMITS.id);
-const name = z.string().trim().min(1).max(LIMITS.name);
-const metreText = z.string().min(1).max(LIMITS.name);
-const rhythmText = z.string().max(LIMITS.rhythmTextLength);
-const count = z.int().min(1).max(LIMITS.statements);
-const turn = z.int().min(-LIMITS.rhythmValues).max(LIMITS.rhythmValues);
-const reading = z.enum(['forwards', 'backwards-values', 'backwards-attacks']);
-
-export const tempoSchema = z.strictObject({ beat: exactText, perMinute: exactText });
-
-const stepSchema = z.discriminatedUnion('kind', [
-  z.strictObject({ kind: z.literal('augment'), factor: exactText }),
-  z.strictObject({ kind: z.literal('diminish'), factor: exactText }),
-  z.strictObject({ kind: z.literal('retrograde'), by: z.enum(['values', 'attacks']) }),
-  z.strictObject({
-    kind: z.literal('rotate'),
-    steps: turn,
-    by: z.union([z.enum(['values', 'attacks']), z.strictObject({ pulse: exactText })]),
-  }),
-  z.strictObject({ kind: z.literal('add'), amount: exactText }),
-]);
-
-/** `successive`, `together`, `ending-together`, or a new entry every so often. */
-const entriesSchema = z.union([z.enum(['successive', 'together', 'ending-together']), z.strictObject({ every: exactText })]);
-
-const proportionSchema = z
-  .strictObject({
-    kind: z.literal('proportion'),
-    factors: z.array(exactText).min(1).max(LIMITS.statements).optional(),
-    ratio: exactText.optional(),
-    count: count.optional(),
-    entries: entriesSchema.optional(),
-    reading: reading.optional(),
-    readings: z.array(reading).min(1).max(LIMITS.statements).optional(),
-    rotations: z.array(turn).min(1).max(LIMITS.statements).optional(),
-  })
-  .refine(
-    ({ factors, ratio, count }) =>
-      factors === undefined ? ratio !== undefined && count !== undefined : ratio === undefined && count === undefined,
-    { message: 'A proportion has either a list of factors, or a ratio and a count.' },
-  );
-
-const rotationSchema = z.strictObject({
-  kind: z.literal('rotation'),
-  steps: turn,
-  by: z.union([z.enum(['values', 'attacks']), z.strictObject({ pulse: exactText })]),
-  count,
-  entries: entriesSchema.optional(),
-  reading: reading.optional(),
-});
-const repeats = z.int().min(1).max(LIMITS.repeatCount);
-const phaseSchema = z.strictObject({
-  kind: z.literal('phase'),
-  pulse: exactText,
-  shift: z.int().min(-LIMITS.pulses).max(LIMITS.pulses),
-  repeatsPerShift: repeats,
-  shifts: z.int().min(0).max(LIMITS.statements),
-  reading: reading.optional(),
-});
-const additiveSchema = z.strictObject({
-  kind: z.literal('additive'),
-  direction: z.enum(['growing', 'shrinking']),
-  from: z.enum(['front', 'back']),
-  repeatsEach: repeats,
-  reading: reading.optional(),
-});
-const fillingInSchema = z.strictObject({
-  kind: z.literal('filling-in'),
-  order: z.array(z.int().min(0)).max(LIMITS.statements),
-  repeatsEach: repeats,
-  reading: reading.optional(),
-});
-const cycleSchema = z.strictObject({
-  kind: z.literal('cycle'),
-  colour: z.array(id).min(1).max(LIMITS.statements),
-  until: z.union([z.literal('alignment'), count]),
-  reading: reading.optional(),
-});
-const resultantSchema = z.strictObject({
-  kind: z.literal('resultant'),
-  a: z.int().min(1).max(LIMITS.pulses),
-  b: z.int().min(1).max(LIMITS.pulses),
-  unit: exactText,
-});
-
-export const processSchema = z.discriminatedUnion('kind', [
-  proportionSchema,
-  rotationSchema,
-  phaseSchema,
-  additiveSchema,
-  fillingInSchema,
-  cycleSchema,
-  resultantSchema,
-]);
+/** Every process of the registry, told apart by its kind. */
+const schemas = Object.values(PROCESSES).map(({ schema }) => schema);
+export const processSchema = z.discriminatedUnion('kind', schemas as [(typeof schemas)[number], ...typeof schemas]);
 
 const lineSchema = z.strictObject({ instrument: id, rhythm: rhythmText });
 
@@ -175,8 +82,8 @@ export type ProcessSection = Extract<Section, { kind: 'process' }>;
 export type FreeSection = Extract<Section, { kind: 'free' }>;
 export type MirrorSection = Extract<Section, { kind: 'mirror' }>;
 export type Process = ProcessSection['process'];
-export type ProportionProcess = Extract<Process, { kind: 'proportion' }>;
-export type Entries = NonNullable<ProportionProcess['entries']>;
+export type { ProportionProcess } from '../process/proportion';
+export type { Entries } from './fields';
 export type Instrument = Study['instruments'][number];
 export type Family = Instrument['family'];
 export type Role = Section['role'];

@@ -82,17 +82,17 @@ export class SectionBuilder {
 
   private process(section: ProcessSection, path: string): Placed[] {
     const where = { section: section.id, path: `${path}.process` };
-    const rules = rulesOf(section.process.kind);
-    if (rules === undefined) {
-      throw new EngineError('not_supported', `The process “${section.process.kind}” cannot be built yet. Choose a proportion.`, where);
-    }
-    if (section.instruments.length === 0) {
+    const rules = rulesOf(section.process);
+    const own = rules.ownInstruments?.(section.process);
+    const instruments = own ?? section.instruments;
+    if (instruments.length === 0) {
       throw new EngineError('unknown_instrument', 'Nobody plays this section. Choose at least one instrument.', { ...where, path: `${path}.instruments` });
     }
-    section.instruments.forEach((id, n) => {
-      if (!this.instruments.has(id)) throw unknownInstrument(id, { section: section.id, path: `${path}.instruments.${n}` });
+    const list = own === undefined ? `${path}.instruments` : where.path;
+    [...instruments, ...section.instruments].forEach((id, n) => {
+      if (!this.instruments.has(id)) throw unknownInstrument(id, { section: section.id, path: own === undefined ? `${list}.${n}` : list });
     });
-    const subject = this.subject(section.subject, { section: section.id, path: `${path}.subject` });
+    const subject = rules.takesSubject ? this.subject(section.subject, { section: section.id, path: `${path}.subject` }) : [];
     const prepared = section.before?.length ? locate({ path: `${path}.before` }, () => applySteps(subject, section.before!)) : subject;
     const context = {
       section,
@@ -100,7 +100,7 @@ export class SectionBuilder {
       path: where.path,
       // A rotation by a pulse may leave the rest of a value, which is no attack any more.
       subject: prepared === subject ? subject : prepared.map((value) => (value.rest ? { ...value, origin: null } : value)),
-      instruments: section.instruments,
+      instruments,
     };
     this.reserve(rules.size(context));
     return rules.statements(context);

@@ -1,5 +1,6 @@
 import type { Fraction } from '../exact/fraction';
 import type { Reading, Rhythm } from '../rhythm/types';
+import type { RotateBy } from '../transform/rotate';
 
 export type BuiltSection = {
   readonly id: string;
@@ -25,8 +26,11 @@ export type Statement = {
   readonly subject: string | null;
   readonly factor: Fraction;
   readonly reading: Reading;
-  /** by values */
+  /** by values, unless `rotationBy` says otherwise */
   readonly rotation: number;
+  readonly rotationBy?: RotateBy;
+  /** how often it goes through its figure, where more than once */
+  readonly repeats?: number;
   /** whether it is turned about by a mirror; twice turned is not */
   readonly mirrored: boolean;
   readonly rhythm: Rhythm;

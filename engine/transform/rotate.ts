@@ -14,8 +14,8 @@ function turn<T>(items: readonly T[], steps: number): T[] {
   return [...items.slice(first), ...items.slice(0, first)];
 }
 
-/** A rest of some length that keeps whatever else travels with the value it comes from. */
-function restOf<T extends Value>(value: T, length: Fraction): T {
+/** A value as a rest, which keeps whatever else travels with it but its marks. */
+export function silenced<T extends Value>(value: T, length = value.length): T {
   const rest: T = { ...value, length, rest: true };
   for (const mark of ['accent', 'roll', 'sound'] as const) delete (rest as { -readonly [K in keyof T]?: T[K] })[mark];
   return rest;
@@ -32,7 +32,7 @@ function enterLater<T extends Value>(rhythm: readonly T[], steps: number, pulse:
     const end = at.add(value.length);
     if (end.compare(entry) > 0) {
       const kept = { ...value, length: entry.sub(at) };
-      return [restOf(value, end.sub(entry)), ...rhythm.slice(index + 1), ...rhythm.slice(0, index), kept];
+      return [silenced(value, end.sub(entry)), ...rhythm.slice(index + 1), ...rhythm.slice(0, index), kept];
     }
     at = end;
   }

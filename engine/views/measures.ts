@@ -2,28 +2,14 @@ import { EngineError } from '../errors';
 import { type Fraction, ZERO, toFraction } from '../exact/fraction';
 import { LIMITS } from '../limits';
 import { type Metre, metreOfLength, parseMetre } from '../rhythm/metre';
-import type { MirrorSection, Section, Study } from '../study/schema';
+import type { Study } from '../study/schema';
 import type { BuiltStudy } from '../study/types';
+import { metreOf } from './metre-of';
+
+export { metreOf, tempoOf } from './metre-of';
 
 /** What decides measures and time: the sections and the whole length. */
 export type Extent = Pick<BuiltStudy, 'sections' | 'totalLength'>;
-
-function inherited<K extends 'metre' | 'tempo'>(study: Study, section: Section, field: K): NonNullable<Section[K]> | undefined {
-  const seen = new Set<string>();
-  let one: Section | undefined = section;
-  while (one !== undefined && one[field] === undefined && one.kind === 'mirror' && !seen.has(one.id)) {
-    seen.add(one.id);
-    const { of }: MirrorSection = one;
-    one = study.sections.find(({ id }) => id === of);
-  }
-  return one?.[field] as NonNullable<Section[K]> | undefined;
-}
-
-/** The metre of a section: its own, or that of what it mirrors, or the study's. */
-export const metreOf = (study: Study, section: Section): Metre => inherited(study, section, 'metre') ?? study.metre;
-
-/** The tempo of a section: its own, or that of what it mirrors, or the study's. */
-export const tempoOf = (study: Study, section: Section): Study['tempo'] => inherited(study, section, 'tempo') ?? study.tempo;
 
 export type MetreChange = { readonly at: Fraction; readonly metre: Metre };
 

@@ -3,6 +3,8 @@ import {
   type Entries,
   type Instrument,
   LIMITS,
+  type Process,
+  type ProcessKind,
   type ProcessSection,
   type ProportionProcess,
   type Reading,
@@ -10,7 +12,9 @@ import {
   type Study,
   type StudyInput,
   formatFraction,
+  parseRhythm,
   proportionFactors,
+  rulesOf,
   isFactor,
   toFactor,
   toFraction,
@@ -71,7 +75,33 @@ export const setCount = (id: string, count: number): Edit => {
   });
 };
 
-export const setEntries = (id: string, entries: Entries): Edit => mapProportion(id, (process) => ({ ...process, entries }));
+/** Puts fields of a section's process in place, whatever process it is; what does not fit it is refused when it is built. */
+export const setProcessFields = (id: string, fields: Readonly<Record<string, unknown>>): Edit =>
+  mapProcess(id, (section) => ({ ...section, process: { ...section.process, ...fields } as Process }));
+
+export const setEntries = (id: string, entries: Entries): Edit => setProcessFields(id, { entries });
+
+/**
+ * Another process on the same subject, as it is begun; entries and reading go with it where it has them, and so many
+ * instruments as it asks for.
+ */
+export const setProcessKind = (id: string, kind: ProcessKind): Edit => (study) => {
+  const section = study.sections.find((one) => one.id === id);
+  if (section?.kind !== 'process' || section.process.kind === kind) return study;
+  const rules = rulesOf({ kind });
+  const others = study.instruments.map((one) => one.id).filter((one) => !section.instruments.includes(one));
+  const instruments = rules.players === undefined ? section.instruments : [...section.instruments, ...others].slice(0, rules.players);
+  const subjects = study.subjects.find((one) => one.id === section.subject) ?? study.subjects[0];
+  const begun = rules.begin(subjects ? parseRhythm(subjects.rhythm) : [], instruments);
+  const { reading, entries } = section.process as { reading?: Reading; entries?: Entries };
+  const kept = Object.fromEntries(Object.entries({ reading, entries }).filter(([field, value]) => value !== undefined && field in begun));
+  const process = { ...begun, ...kept } as Process;
+  return mapProcess(id, (one) => ({ ...one, process, instruments, ...(rules.takesSubject && subjects ? { subject: subjects.id } : {}) }))(study);
+};
+
+/** What is done to the subject before the process. */
+export const setBefore = (id: string, before: ProcessSection['before']): Edit =>
+  mapProcess(id, ({ before: _, ...section }) => (before?.length ? { ...section, before } : section));
 
 export const setReadings = (id: string, readings: readonly Reading[]): Edit =>
   mapProportion(id, ({ readings: _readings, reading: _reading, ...process }) =>

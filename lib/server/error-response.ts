@@ -8,10 +8,13 @@ import { logFault } from './log-fault';
 /** Codes of Node and of PostgreSQL that say: no connection, or a server that is starting or stopping. */
 const NO_DATABASE = new Set(['ECONNREFUSED', 'ECONNRESET', 'ENOTFOUND', 'ETIMEDOUT', 'EPIPE', '57P01', '57P02', '57P03', '53300', '08006']);
 
+/** What the driver says without a code where a connection has gone, the last of them when it is asked to undo what it had begun. */
+const GONE = /^timeout exceeded when trying to connect$|^Connection terminated|is not queryable$/;
+
 function isDatabaseAway(error: unknown): boolean {
   for (let at: unknown = error, depth = 0; at instanceof Error && depth < 5; at = at.cause, depth += 1) {
     if ('code' in at && typeof at.code === 'string' && NO_DATABASE.has(at.code)) return true;
-    if (at.message === 'timeout exceeded when trying to connect' || at.message.startsWith('Connection terminated')) return true;
+    if (GONE.test(at.message)) return true;
   }
   return false;
 }
