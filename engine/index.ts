@@ -58,6 +58,7 @@ export {
   type MetreChange,
   type PlannedMeasure,
 } from './views/measures';
+export type { Repeat } from './views/repeats';
 export { scoreOf, type Score, type Staff } from './views/score';
 export { playEvents } from './views/play-events';
 export { threadsOf, type Thread, type ThreadReading, type ThreadRow, type ThreadTick, type Threads } from './views/threads';
@@ -72,6 +73,6 @@ export {
   type DescribeContext,
 } from './describe/describe';
 export { sectionSentence } from './describe/sentence';
-export { readingWords, stepWords, type FieldControl, type FieldInput, type SentenceControl, type SentencePart } from './describe/sentence-parts';
+export { readingWords, rotationWords, stepWords, type FieldControl, type FieldInput, type SentenceControl, type SentencePart } from './describe/sentence-parts';
 export { mirrorWords, sectionRemarks, sectionSum, studyMetres, studySum, sumWords, type Remark, type Sum } from './describe/sums';
 export { inSentence, measureNumber, measureWords, valueName, type DescribeOptions, type ValueNames } from './describe/words';

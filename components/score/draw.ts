@@ -1,6 +1,6 @@
 import type * as Vex from 'vexflow/bravura';
 import type { NotationSymbol } from '@/engine';
-import { SYSTEM_TOP, onsets } from './layout';
+import { REPEAT_SIGN, SYSTEM_TOP, onsets } from './layout';
 import type { DrawnScore, DrawnStaff, SystemSpec } from './spec';
 
 type VexFlow = typeof Vex;
@@ -131,6 +131,8 @@ export type SystemDrawing = {
   readonly places: readonly (readonly [number, number])[];
   /** left edge of each measure, in CSS pixels */
   readonly measureLefts: readonly number[];
+  /** right edge, in CSS pixels */
+  readonly width: number;
 };
 
 /**
@@ -160,6 +162,7 @@ export function drawSystem(vf: VexFlow, host: HTMLDivElement, score: DrawnScore,
     if (column === 0) probe.addClef('percussion');
     const { signature } = score.measures[first + column]!;
     if (signature !== null) probe.addTimeSignature(signature);
+    if (score.signs?.[first + column]?.begins) probe.setBegBarType(vf.BarlineType.REPEAT_BEGIN);
     return probe.getNoteStartX() + 14;
   });
   const widths = spec.widths.map((width, column) => Math.max(width, formatters[column]!.least * 1.08 + openings[column]! + 12));
@@ -187,7 +190,10 @@ export function drawSystem(vf: VexFlow, host: HTMLDivElement, score: DrawnScore,
       stave.setConfigForLines(staffShape(staff.sounds).lines.toReversed().map((visible) => ({ visible })));
       if (column === 0) stave.addClef('percussion');
       if (planned.signature !== null) stave.addTimeSignature(planned.signature);
-      if (first + column === score.measures.length - 1) stave.setEndBarType(vf.BarlineType.END);
+      const { begins, times } = score.signs?.[first + column] ?? {};
+      if (begins) stave.setBegBarType(vf.BarlineType.REPEAT_BEGIN);
+      if (times !== undefined) stave.setEndBarType(vf.BarlineType.REPEAT_END);
+      else if (first + column === score.measures.length - 1) stave.setEndBarType(vf.BarlineType.END);
       return stave;
     });
     const start = Math.max(...drawn.map((stave) => stave.getNoteStartX()));
@@ -197,7 +203,7 @@ export function drawSystem(vf: VexFlow, host: HTMLDivElement, score: DrawnScore,
       line.setType('singleLeft').setContext(context).draw();
     }
     const { formatter, voices } = formatters[column]!;
-    if (voices.length > 0) formatter.format(voices, drawn[0]!.getNoteEndX() - start - 12);
+    if (voices.length > 0) formatter.format(voices, drawn[0]!.getNoteEndX() - start - 12 - (score.signs?.[first + column]?.times === undefined ? 0 : REPEAT_SIGN / 2));
     const from = planned.start.valueOf();
     places.push([from, start * scale]);
     cells.forEach(({ notes, voice, beams, tuplets }, row) => {
@@ -232,7 +238,7 @@ export function drawSystem(vf: VexFlow, host: HTMLDivElement, score: DrawnScore,
   const lastMeasure = score.measures[end - 1]!;
   places.push([lastMeasure.start.valueOf() + lastMeasure.length.valueOf(), x * scale - 6]);
   host.querySelector('svg')?.setAttribute('aria-hidden', 'true');
-  return { places: places.sort((a, b) => a[0] - b[0]), measureLefts };
+  return { places: places.sort((a, b) => a[0] - b[0]), measureLefts, width: x * scale };
 }
 
 /** Tells the page which statement and attack a drawn note belongs to. */

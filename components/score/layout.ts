@@ -1,9 +1,10 @@
-import type { NotationMeasure, NotationSymbol, PlannedMeasure } from '@/engine';
+import type { NotationMeasure, NotationSymbol } from '@/engine';
 import type { DrawnScore, DrawnStaff, SystemSpec } from './spec';
 
 /** CSS pixels: what a system begins with, and the room about a staff. */
 export const OPENING = 36;
 export const SIGNATURE = 34;
+export const REPEAT_SIGN = 18;
 /** from one staff to the next where names stand beside them, and where they stand beneath */
 export const STAFF_PITCH = { beside: 80, beneath: 94 } as const;
 export const SYSTEM_TOP = 34;
@@ -48,7 +49,8 @@ export function measureWidth(score: DrawnScore, index: number): number {
     return sum + 15 + 7 * Math.log2(1 + 32 * Math.max(gap, 0)) + starts.get(key)!;
   }, 0);
   const signature = planned.signature === null ? 0 : SIGNATURE;
-  return Math.max(58, room + 26) + signature;
+  const { begins, times } = score.signs?.[index] ?? {};
+  return Math.max(times === undefined ? 58 : 96, room + 26) + signature + (begins ? REPEAT_SIGN : 0) + (times === undefined ? 0 : REPEAT_SIGN);
 }
 
 /** Breaks measures into systems that fill the width; a system keeps at least one measure. */
@@ -80,9 +82,9 @@ function sounding(staves: readonly DrawnStaff[], first: number, end: number): re
 }
 
 /** What a system looks like, as text: the same text needs no new drawing. */
-export function signatureOf(spec: SystemSpec, measures: readonly PlannedMeasure[]): string {
+export function signatureOf(spec: SystemSpec, { measures, signs }: Pick<DrawnScore, 'measures' | 'signs'>): string {
   const parts: string[] = [spec.widths.map((width) => width.toFixed(1)).join()];
-  for (let index = spec.first; index < spec.end; index += 1) parts.push(`${measures[index]!.number}:${measures[index]!.signature ?? ''}`);
+  for (let index = spec.first; index < spec.end; index += 1) parts.push(`${measures[index]!.number}:${measures[index]!.signature ?? ''}:${signs?.[index]?.begins ?? ''}:${signs?.[index]?.times ?? ''}`);
   for (const staff of spec.staves) {
     parts.push(`${staff.id}/${staff.name}/${staff.sounds}`);
     for (const measure of staff.measures.slice(spec.first, spec.end)) {

@@ -39,7 +39,7 @@ export function ScoreLines({
           key={spec.first}
           score={score}
           spec={spec}
-          signature={signatureOf(spec, score.measures)}
+          signature={signatureOf(spec, score)}
           labels={labels}
           names={names}
           {...(scroller ? { scroller } : {})}

@@ -13,7 +13,20 @@ export type DrawnStaff = {
   readonly sources: readonly ({ readonly statement: string; readonly origin: number | null } | null)[];
 };
 
-export type DrawnScore = { readonly measures: readonly PlannedMeasure[]; readonly staves: readonly DrawnStaff[] };
+/** Repeat signs about a printed measure. */
+export type RepeatSigns = {
+  readonly begins?: boolean;
+  /** how often what ends here is played */
+  readonly times?: number;
+};
+
+/** What is printed: measures that are repeated stand once, so that their `index` may jump. */
+export type DrawnScore = {
+  readonly measures: readonly PlannedMeasure[];
+  readonly staves: readonly DrawnStaff[];
+  /** one for each printed measure; without it, nothing is repeated */
+  readonly signs?: readonly RepeatSigns[];
+};
 
 /** One line of the page: so many measures of so many staves. */
 export type SystemSpec = {

@@ -1,5 +1,5 @@
 import type { CSSProperties } from 'react';
-import type { Instrument, Study } from '@/engine';
+import type { Instrument, Statement, Study } from '@/engine';
 
 /** A family's texture, as a class; the colour is set by `tint`. */
 export const TEXTURES: Record<Instrument['family'], string> = {
@@ -23,3 +23,13 @@ export function tint(study: Study, id: string | null): string {
 export const tintStyle = (study: Study, id: string | null): CSSProperties => ({ '--c': tint(study, id) }) as CSSProperties;
 export const textureOf = (study: Study, id: string | null): string =>
   TEXTURES[study.instruments.find((one) => one.id === id)?.family ?? 'metal'];
+
+/** Whoever plays a statement, alone or in turn, each once. */
+export const instrumentsOf = ({ instrument, assigned }: Pick<Statement, 'instrument' | 'assigned'>): readonly (string | null)[] =>
+  assigned === undefined ? [instrument] : [...new Set(assigned)];
+
+/** The first of their names, and how many more. */
+export function playersOf(study: Study, statement: Pick<Statement, 'instrument' | 'assigned'>): string {
+  const names = instrumentsOf(statement).map((id) => study.instruments.find((one) => one.id === id)?.name ?? '');
+  return names.length < 2 ? names.join('') : `${names[0]} + ${names.length - 1}`;
+}

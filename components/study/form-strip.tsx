@@ -3,7 +3,7 @@
 import { type KeyboardEvent, useEffect, useRef } from 'react';
 import { clockOf, describeStatement, formatClock, measureAt, measureNumber, metreOf, sectionSentence } from '@/engine';
 import { useStudy } from './context';
-import { textureOf, tintStyle } from './family';
+import { instrumentsOf, textureOf, tintStyle } from './family';
 import { bracketsOf, lanesOf } from './form-layout';
 
 const LEVEL = 16;
@@ -122,17 +122,23 @@ export function FormStrip() {
                         aria-label={describeStatement(state, statement)}
                         title={describeStatement(state, statement)}
                         onClick={() => select({ section: section.id, statement: statement.id, scroll: true })}
-                        className={`grows @container absolute overflow-hidden ${textureOf(study, statement.instrument)} ${
+                        className={`grows @container absolute overflow-hidden ${
                           isOn ? 'z-10 outline-[2.5px] outline-ink outline-offset-[1.5px]' : ''
                         }`}
                         style={{
-                          ...tintStyle(study, statement.instrument),
                           left: `calc(${left}% + 2px)`,
                           width: `calc(${width}% - 3px)`,
                           top: lane.get(statement.id)! * laneHeight,
                           height: laneHeight - (count === 1 ? 0 : 2),
                         }}
                       >
+                        {instrumentsOf(statement).map((instrument, part, all) => (
+                          <span
+                            key={part}
+                            className={`absolute inset-x-0 ${textureOf(study, instrument)}`}
+                            style={{ ...tintStyle(study, instrument), top: `${(100 * part) / all.length}%`, height: `${100 / all.length}%` }}
+                          />
+                        ))}
                         {count === 1 && (
                           <span className="absolute left-1.5 top-1/2 hidden -translate-y-1/2 rounded-[1px] bg-paper px-[5px] text-[12.5px] font-[650] leading-4 text-ink @min-[34px]:block">
                             {measureNumber(statement.length, metreOf(study, section))}

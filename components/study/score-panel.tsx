@@ -4,6 +4,7 @@ import { type MouseEvent, useCallback, useEffect, useMemo, useRef, useState } fr
 import { measureAt, metreOf, scoreOf } from '@/engine';
 import { ScoreLines } from '../score/score-lines';
 import type { SystemDrawing } from '../score/draw';
+import { foldScore } from '../score/fold';
 import type { DrawnScore, SystemSpec } from '../score/spec';
 import { subjectOf, useStudy } from './context';
 
@@ -40,6 +41,15 @@ function Overlay({ spec, drawing, score }: { spec: SystemSpec; drawing: SystemDr
           </span>
         );
       })}
+      {score.signs?.slice(spec.first, spec.end).map(({ times }, column) => {
+        if (times === undefined) return null;
+        const right = drawing.measureLefts[column + 1] ?? drawing.width;
+        return (
+          <span key={column} data-testid="times" className="absolute top-0 -translate-x-full whitespace-nowrap text-[13px] font-semibold" style={{ left: right - 2 }}>
+            {`${times} times`}
+          </span>
+        );
+      })}
     </div>
   );
 }
@@ -52,7 +62,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
   const scroller = useRef<HTMLDivElement>(null);
   const drawn = useRef(new Map<number, { spec: SystemSpec; drawing: SystemDrawing; host: HTMLDivElement }>());
   const made = useMemo(() => scoreOf(study, built), [study, built]);
-  const score = useMemo<DrawnScore>(
+  const whole = useMemo<DrawnScore>(
     () => ({
       measures: made.measures,
       staves: made.staves
@@ -70,12 +80,14 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
     }),
     [made],
   );
+  const { score, fold } = useMemo(() => foldScore(whole, made.repeats), [whole, made]);
   const failures = made.staves.flatMap(({ instrument, error }) => (error ? [{ instrument, error }] : []));
 
   const section = study.sections.find(({ id }) => id === selection.section)!;
   const chosen = built.statements.find(({ id }) => id === selection.statement);
   const target = chosen ?? built.sections.find(({ id }) => id === section.id)!;
   const targetMeasure = measureAt(measures, target.start)?.index ?? 0;
+  const targetPrinted = fold.printed(targetMeasure);
   const subject = subjectOf(state, selection);
 
   const light = useCallback(
@@ -95,34 +107,36 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
 
   useEffect(() => {
     const box = scroller.current;
-    const system = [...(box?.querySelectorAll<HTMLElement>('[data-testid="system"]') ?? [])].findLast((one) => Number(one.dataset.first) <= targetMeasure);
+    const system = [...(box?.querySelectorAll<HTMLElement>('[data-testid="system"]') ?? [])].findLast((one) => Number(one.dataset.first) <= targetPrinted);
     if (box && system) box.scrollTo({ top: system.offsetTop - box.offsetTop, behavior: 'smooth' });
-  }, [targetMeasure]);
+  }, [targetPrinted]);
 
   useEffect(() => {
     let shown: HTMLElement | null = null;
-    return place.watch((position) => {
+    const { measures: shownMeasures } = score;
+    return place.watch((heard) => {
       const box = scroller.current;
       if (!box) return;
+      const position = heard === null ? null : fold.place(heard);
       for (const { spec, drawing, host } of drawn.current.values()) {
         const line = host.parentElement?.querySelector<HTMLElement>('[data-cursor]');
         if (!line) continue;
-        const from = measures[spec.first]?.start.valueOf() ?? 0;
-        const last = measures[spec.end - 1];
+        const from = shownMeasures[spec.first]?.start.valueOf() ?? 0;
+        const last = shownMeasures[spec.end - 1];
         const end = last ? last.start.valueOf() + last.length.valueOf() : 0;
         const isHere = position !== null && position >= from && position < end;
         line.hidden = !isHere;
         if (isHere) line.style.transform = `translateX(${xAt(drawing, position)}px)`;
       }
       if (position === null) return;
-      const now = measures.findLast((measure) => measure.start.valueOf() <= position)?.index ?? 0;
+      const now = shownMeasures.findLastIndex((measure) => measure.start.valueOf() <= position);
       const system = [...box.querySelectorAll<HTMLElement>('[data-testid="system"]')].findLast((one) => Number(one.dataset.first) <= now);
       if (system && system !== shown) {
         if (shown !== null) box.scrollTo({ top: system.offsetTop - box.offsetTop });
         shown = system;
       }
     });
-  }, [place, measures]);
+  }, [place, score, fold]);
 
   const onClick = (event: MouseEvent<HTMLDivElement>) => {
     const note = (event.target as Element).closest<SVGElement>('[data-statement]');
@@ -136,7 +150,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
     if (!one) return;
     const x = event.clientX - one.host.getBoundingClientRect().left;
     const column = one.drawing.measureLefts.findLastIndex((left) => left <= x);
-    const measure = measures[one.spec.first + Math.max(column, 0)];
+    const measure = score.measures[one.spec.first + Math.max(column, 0)];
     if (measure) onSeek(measure.start.valueOf());
   };
 

@@ -2,6 +2,7 @@
 
 import { type KeyboardEvent, type PointerEvent, useEffect, useMemo, useRef, useState } from 'react';
 import {
+  type Statement,
   type ThreadReading,
   type ThreadRow,
   type Threads,
@@ -10,11 +11,12 @@ import {
   metreOf,
   parseMetre,
   placeWords,
+  rotationWords,
   threadsOf,
 } from '@/engine';
 import { Segments } from '../ui/segments';
 import { useStudy } from './context';
-import { tint } from './family';
+import { playersOf, tint } from './family';
 import { type ThreadGeometry, TICK, hit, rowY, threadPath, tickX } from './thread-geometry';
 import { useWidth } from './use-width';
 
@@ -24,9 +26,15 @@ const READINGS = [
   ['to-one-end', 'To one end'],
 ] as const satisfies readonly (readonly [ThreadReading, string])[];
 
-function ticksPath(row: ThreadRow, geometry: ThreadGeometry, index: number): string {
+/** The ticks of a row: one path for each instrument that they are handed to, null for the row's own. */
+function ticksPaths({ statement: { assigned }, ticks }: ThreadRow, geometry: ThreadGeometry, index: number): [instrument: string | null, path: string][] {
   const y = rowY(geometry, index);
-  return row.ticks.map(({ at }) => `M${tickX(geometry, at.valueOf()).toFixed(1)} ${y - TICK}v${2 * TICK}`).join('');
+  const paths = new Map<string | null, string>();
+  ticks.forEach(({ at }, attack) => {
+    const instrument = assigned?.[attack] ?? null;
+    paths.set(instrument, `${paths.get(instrument) ?? ''}M${tickX(geometry, at.valueOf()).toFixed(1)} ${y - TICK}v${2 * TICK}`);
+  });
+  return [...paths];
 }
 
 function threadsPath(threads: Threads, geometry: ThreadGeometry, origin: number | null): string {
@@ -41,6 +49,21 @@ function threadsPath(threads: Threads, geometry: ThreadGeometry, origin: number 
       ),
     )
     .join('');
+}
+
+/** What fits beside a row, in characters. */
+const ROOM = 17;
+
+/** Beside a row: what is done to the subject in it; what has no room there is told in the table of statements. */
+function rowWords({ subject, factor, rotation, rotationBy, repeats }: Statement): string {
+  if (subject === null) return 'no subject';
+  const words = [
+    ...(factor.equals(1) && (rotation !== 0 || repeats !== undefined) ? [] : [`times ${formatFraction(factor)}`]),
+    ...(rotation === 0 ? [] : [`by ${rotationWords(rotation, rotationBy ?? 'values').replace(/ of .*/, '')}`]),
+    ...(repeats === undefined ? [] : [`${repeats} times`]),
+  ];
+  while (words.length > 1 && words.join(', ').length > ROOM) words.pop();
+  return words.join(', ');
 }
 
 /** Measure lines and numbers along the top: thinned until they stand apart. */
@@ -157,11 +180,11 @@ export function ThreadsView() {
               const x = tickX(geometry, row.start.valueOf());
               const end = x + statement.length.valueOf() * geometry.scale;
               const colour = tint(study, statement.instrument);
-              const name = study.instruments.find(({ id }) => id === statement.instrument)?.name ?? '';
+              const name = playersOf(study, statement);
               const current = currentTick(row);
               const tick = row.ticks[current];
               const isChosen = selection.statement === statement.id;
-              const factor = statement.subject === null ? 'free line' : `times ${formatFraction(statement.factor)}`;
+              const factor = rowWords(statement);
               const label = isNarrow ? { x: 2, y: y - 19 } : { x: 0, y: y + 1 };
               return (
                 <g
@@ -193,7 +216,9 @@ export function ThreadsView() {
                   )}
                   <rect x={x} y={y - (isChosen ? 2.5 : 1.5)} width={Math.max(end - x, 0)} height={isChosen ? 5 : 3} fill={colour} />
                   <line x1={end} x2={end} y1={y - TICK} y2={y + TICK} stroke={colour} />
-                  <path d={ticksPath(row, geometry, index)} stroke={colour} strokeWidth={3.2} />
+                  {ticksPaths(row, geometry, index).map(([instrument, path]) => (
+                    <path key={instrument ?? ''} d={path} stroke={instrument === null ? colour : tint(study, instrument)} strokeWidth={3.2} />
+                  ))}
                   {tick && (
                     <rect
                       x={tickX(geometry, tick.at.valueOf()) - 4}

@@ -8,7 +8,7 @@ import { type PlannedMeasure, measureAt, metreOf, planMeasures, tempoOf } from '
 import { sectionSentence } from './sentence';
 import { readingWords, rotationWords } from './sentence-parts';
 import { sectionRemarks, sectionSum, studyMetres, studySum, sumWords } from './sums';
-import { type DescribeOptions, capital, inSentence, listWords, measureWords, plural, valueName } from './words';
+import { type DescribeOptions, capital, inSentence, listWords, measureWords, plural, times, valueName } from './words';
 
 /** “quarter = 84”, with the user's names of values. */
 export const tempoWords = (tempo: Study['tempo'], { valueNames }: DescribeOptions = {}): string =>
@@ -86,10 +86,18 @@ function spanWords({ measures, clock }: DescribeContext, start: Fraction, length
   return `${where}, from ${formatClock(clock.secondsAt(start))} to ${formatClock(clock.secondsAt(end))}`;
 }
 
+/** Whoever plays a statement: one instrument, or several in turn. */
+function playersWords(study: Study, { instrument, assigned }: Statement): string {
+  const nameOf = (id: string | null) => study.instruments.find((one) => one.id === id)?.name ?? '';
+  if (assigned === undefined) return nameOf(instrument);
+  const names = [...new Set(assigned)].map(nameOf);
+  return `${listWords([names[0] ?? 'Nobody', ...names.slice(1).map(inSentence)])}${names.length > 1 ? ' in turn' : ''}`;
+}
+
 /** One statement in a plain sentence, for a screen reader and for a table. */
 export function describeStatement(context: DescribeContext, statement: Statement): string {
   const { study, built } = context;
-  const name = study.instruments.find(({ id }) => id === statement.instrument)?.name ?? 'Several instruments';
+  const name = playersWords(study, statement);
   const attacks = plural(statement.rhythm.filter((v) => !v.rest).length, 'attack');
   const where = spanWords(context, statement.start, statement.length);
   const section = study.sections.find(({ id }) => id === statement.section)!;
@@ -99,6 +107,7 @@ export function describeStatement(context: DescribeContext, statement: Statement
   const details = [
     statement.factor.equals(1) ? 'at its own length' : `at ${formatFraction(statement.factor)} times its length`,
     readingWords(statement.reading) + (statement.mirrored ? ', then mirrored' : ''),
+    ...(statement.repeats === undefined ? [] : [`${times(statement.repeats)} through`]),
     ...(statement.rotation === 0 ? [] : [`rotated by ${rotationWords(statement.rotation, statement.rotationBy ?? 'values')}`]),
     attacks,
     long,

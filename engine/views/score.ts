@@ -9,6 +9,7 @@ import { type LineSource, assembleLine, lineSources, placesOf, statementsOf } fr
 import type { Instrument, Study } from '../study/schema';
 import type { BuiltStudy } from '../study/types';
 import { type PlannedMeasure, metrePlan, planMeasures } from './measures';
+import { type Repeat, repeatsOf } from './repeats';
 
 export type Staff = {
   readonly instrument: Instrument;
@@ -22,7 +23,12 @@ export type Staff = {
   readonly error?: EngineError;
 };
 
-export type Score = { readonly measures: readonly PlannedMeasure[]; readonly staves: readonly Staff[] };
+export type Score = {
+  readonly measures: readonly PlannedMeasure[];
+  readonly staves: readonly Staff[];
+  /** what is printed once and played several times, in order */
+  readonly repeats: readonly Repeat[];
+};
 
 /** A refusal to spell, told of the statement it happens in, with the factors near its own that can be written there. */
 function explain(study: Study, measures: readonly PlannedMeasure[], plan: MetrePlan, sources: readonly LineSource[], error: EngineError): EngineError {
@@ -59,5 +65,5 @@ export function scoreOf(study: Study, built: BuiltStudy): Score {
       return { instrument, measures: [], values, sources, error: explain(study, measures, plan, sources, error) };
     }
   });
-  return { measures, staves };
+  return { measures, staves, repeats: repeatsOf(measures, staves, built) };
 }
