@@ -21,11 +21,13 @@ export function readCursor(text: string, kinds: readonly ('string' | 'number' | 
     if (kind === 'number') return typeof value === 'number' && Number.isFinite(value);
     if (typeof value !== 'string' || /[\0\p{Surrogate}]/u.test(value)) return false;
     if (kind === 'uuid') return UUID.test(value);
-    return kind === 'string' || MOMENT.test(value);
+    return kind === 'string' || isMoment(value);
   });
   return fits ? (values as (string | number)[]) : undefined;
 }
 
 /** The form of the ids that the database makes. */
 export const UUID = /^[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}$/i;
-const MOMENT = /^\d{4}-(0[1-9]|1[0-2])-(0[1-9]|[12]\d|3[01])T([01]\d|2[0-3]):[0-5]\d:[0-5]\d\.\d{3}Z$/;
+const MOMENT = /^(?!0000)\d{4}-(0[1-9]|1[0-2])-(0[1-9]|[12]\d|3[01])T([01]\d|2[0-3]):[0-5]\d:[0-5]\d\.\d{3}Z$/;
+/** A day that the calendar has: the 31st of February reads as one of March. The database has no year 0. */
+const isMoment = (text: string): boolean => MOMENT.test(text) && new Date(text).toISOString() === text;

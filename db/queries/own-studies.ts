@@ -2,7 +2,7 @@ import { and, asc, desc, eq, gt, isNotNull, isNull, lt, type SQL, sql } from 'dr
 import type { Database } from '../connect';
 import { readCursor, writeCursor } from '../cursor';
 import { studies } from '../schema';
-import { LISTED } from './studies';
+import { LISTED, named } from './studies';
 
 export type StudySort = 'changed' | 'title' | 'length';
 
@@ -70,7 +70,7 @@ export async function listOwnStudies(database: Database, params: OwnStudiesParam
   return { studies: page, nextCursor: last && keyOf !== undefined ? writeCursor([keyOf, last.id]) : null };
 }
 
-const owned = (id: string, userId: string) => and(eq(studies.id, id), eq(studies.ownerId, userId));
+const owned = (id: string, userId: string) => and(named(id), eq(studies.ownerId, userId));
 
 /** Throws one of somebody's own studies away, so that it can be restored for a while. Undefined where there is none. */
 export async function deleteStudy(database: Database, { id, userId }: { id: string; userId: string }) {

@@ -57,6 +57,18 @@ describe('errorResponse', () => {
     });
     log.mockRestore();
   });
+
+  it.each([
+    ['timeout exceeded when trying to connect', 503],
+    ['Connection terminated unexpectedly', 503],
+    ['Client has encountered a connection error and is not queryable', 503],
+    ['Client was closed and is not queryable', 503],
+    ['invalid input syntax for type uuid', 500],
+  ])('tells a database that has gone from a fault of ours: %s', async (message, status) => {
+    const log = vi.spyOn(process.stderr, 'write').mockReturnValue(true);
+    expect((await read(new Error('Failed query: rollback', { cause: new Error(message) }))).status).toBe(status);
+    log.mockRestore();
+  });
 });
 
 describe('jsonResponse', () => {

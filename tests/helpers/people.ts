@@ -11,9 +11,12 @@ export function applicationDatabase(): { database: Database; pool: pg.Pool } {
   return connect(setting('TEST_APPLICATION_DATABASE_URL'), 4);
 }
 
-/** The cookie of a session, sealed as the application seals it, so that a test need not wait for a password. */
-export async function sessionToken(token: JWT, secret = setting('TEST_SECRET')): Promise<string> {
-  return encode({ token, secret, maxAge: 3_600 });
+/**
+ * The cookie of a session, sealed as the application seals it, so that a test need not wait for a password.
+ * @param maxAge - seconds that it still has; less than none for one that has run out
+ */
+export async function sessionToken(token: JWT, secret = setting('TEST_SECRET'), maxAge = 3_600): Promise<string> {
+  return encode({ token, secret, maxAge });
 }
 
 export type Person = { readonly id: string; readonly email: string; readonly role: UserRole; readonly reader: Reader };
