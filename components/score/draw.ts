@@ -40,7 +40,7 @@ function staffShape(sounds: number): { lines: boolean[]; keys: string[] } {
 }
 
 /** The ratios that a bracket shows as one figure; others are written out, such as 5:3. */
-const PLAIN_RATIOS = new Set(['3:2', '5:4', '6:4', '7:4', '9:8']);
+const PLAIN_RATIOS = new Set(['3:2', '5:4', '6:4', '7:4', '9:8', '2:3', '4:3']);
 
 type Note = { note: Vex.StaveNote; symbol: NotationSymbol; at: number };
 

@@ -10,6 +10,7 @@ export function bracketTree({ start, end, actual, normal }: Bracket, whole: numb
   const span = end - start;
   // Written units shorter than a quarter are beamed as one group, longer ones each for itself.
   const isShort = span * 4 < whole * normal;
+  if (actual === 2 || actual === 4) return innerNode(0, actual * span, least, true);
   if (actual === 6 || actual === 9) {
     const size = actual === 6 ? 2 : 3;
     const thirds = Array.from({ length: 3 }, (_, n): MetreNode => {

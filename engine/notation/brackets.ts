@@ -1,14 +1,23 @@
 import type { MetreNode } from './tree';
 
 /** A tuplet bracket over [start, end) of a measure: `actual` units in the time of `normal`. */
-export type Bracket = { readonly start: number; readonly end: number; readonly actual: number; readonly normal: number };
+export type Bracket = {
+  readonly start: number;
+  readonly end: number;
+  readonly actual: number;
+  readonly normal: number;
+  /** brackets within it, their positions from its start, multiplied by `actual` */
+  readonly inner?: readonly Bracket[];
+};
 
 /**
  * Conventional ratios (check values 11.7: the next lower normal value): over a span that halves, 3:2, 5:4, 6:4, 7:4 and 9:8;
- * over three such, as in a compound beat, 5:3 and 7:6.
+ * over three such, as in a compound beat, 2:3, 4:3, 5:3 and 7:6.
  */
 const PLAIN: readonly (readonly [number, number])[] = [[3, 2], [5, 4], [6, 4], [7, 4], [9, 8]];
-const COMPOUND: readonly (readonly [number, number])[] = [[5, 3], [7, 6]];
+const COMPOUND: readonly (readonly [number, number])[] = [[2, 3], [4, 3], [5, 3], [7, 6]];
+/** What halves a span of three: it can be written without a bracket too, with dots or ties. */
+const HALVING = new Set([2, 4]);
 
 const isPowerOfTwo = (n: number): boolean => n > 0 && Number.isInteger(Math.log2(n));
 
@@ -16,7 +25,7 @@ const isPowerOfTwo = (n: number): boolean => n > 0 && Number.isInteger(Math.log2
  * What a choice of brackets costs; small is legible. Weights are a setting of ours: few symbols and ties, brackets of one
  * beat where they cut nothing, values that begin on a bracket's units.
  */
-const COST = { symbol: 4, tie: 2, bracket: 2, underBeat: 1, perBeatThree: 4, perBeatOther: 5, acrossParts: 2, offUnit: 3, halfUnit: 2 } as const;
+const COST = { symbol: 4, tie: 2, bracket: 2, underBeat: 1, nest: 8, perBeatThree: 4, perBeatOther: 5, acrossParts: 2, offUnit: 3, halfUnit: 2 } as const;
 
 /** How many symbols a stretch needs, and how many ties lead to one of them. */
 export type Weight = { readonly symbols: number; readonly ties: number };
@@ -29,6 +38,8 @@ export type BracketFinder = {
    * @param edges - where values begin and end, sorted, measure's ends included
    */
   find(node: MetreNode, edges: readonly number[]): BracketPlan | null;
+  /** The same with brackets within brackets, one level: for what nothing simpler can write. */
+  findNested(node: MetreNode, edges: readonly number[]): BracketPlan | null;
 };
 
 /**
@@ -67,16 +78,37 @@ export function bracketsOn(whole: number, beat: number, weigh: (span: Bracket | 
     return between.reduce((a: number, b) => a + b, COST.bracket + width);
   }
 
-  function overSpan(start: number, end: number, edges: readonly number[]): BracketPlan | null {
+  /**
+   * The brackets that each unit of a bracket needs of its own, positions multiplied by its figure; null where one unit cannot
+   * be written.
+   */
+  function innerBrackets({ start, end, actual, normal }: Bracket, edges: readonly number[]): Bracket[] | null {
+    const span = end - start;
+    const written = whole * normal;
+    const found: Bracket[] = [];
+    for (let unit = 0; unit < actual; unit += 1) {
+      const [from, to] = [unit * span, (unit + 1) * span];
+      const inside = edges.map((edge) => (edge - start) * actual).filter((edge) => edge > from && edge < to);
+      if (inside.every((edge) => (edge * 256) % written === 0)) continue;
+      const ratio = PLAIN.find(([a, n]) => (span * 256) / n >= written && inside.every((edge) => ((edge - from) * a * 256) % (written * n) === 0));
+      if (ratio === undefined) return null;
+      found.push({ start: from, end: to, actual: ratio[0], normal: ratio[1] });
+    }
+    return found;
+  }
+
+  function overSpan(start: number, end: number, edges: readonly number[], isNested = false): BracketPlan | null {
     const span = end - start;
     const inner = edges.filter((edge) => edge > start && edge < end);
     let best: BracketPlan | null = null;
     for (const [actual, normal] of ratiosFor(span)) {
-      const bracket = { start, end, actual, normal };
-      if (!fits(bracket, inner)) continue;
+      const plain = { start, end, actual, normal };
+      const within = isNested ? innerBrackets(plain, inner) : fits(plain, inner) ? [] : null;
+      if (within === null) continue;
+      const bracket = within.length === 0 ? plain : { ...plain, inner: within };
       // Two ways to write thirds: six units only where all six are attacked and nothing finer is.
       if (actual === 6 && !(inner.length === 5 && inner.every((edge) => ((edge - start) * actual) % span === 0))) continue;
-      const cost = shapeCost(bracket, inner) + costOf(weigh(bracket));
+      const cost = shapeCost(bracket, inner) + COST.nest * within.length + costOf(weigh(bracket));
       if (best === null || cost < best.cost) best = { cost, brackets: [bracket] };
     }
     return best;
@@ -93,15 +125,37 @@ export function bracketsOn(whole: number, beat: number, weigh: (span: Bracket | 
   const together = (a: BracketPlan | null, b: BracketPlan | null): BracketPlan | null =>
     a === null || b === null ? null : { cost: a.cost + b.cost, brackets: [...a.brackets, ...b.brackets] };
 
-  function find(node: MetreNode, edges: readonly number[]): BracketPlan | null {
+  /** Whether beats of three units lie in a node: only they can be halved by a bracket. */
+  const hasThrees = (node: MetreNode): boolean => (node.kind === 'units' ? node.dottedRest && node.parts.length === 3 : node.kind !== 'inner' && node.parts.some(hasThrees));
+
+  /** A duplet or quadruplet where the beats of a compound metre are halved, if it is easier to read than dots and ties. */
+  function halved(node: MetreNode, edges: readonly number[], plain: BracketPlan): BracketPlan {
+    // A value that begins on a unit keeps the beat in three.
+    if (node.parts.some(({ start }) => start > node.start && edges.includes(start))) return plain;
+    const plan = overSpan(node.start, node.end, edges);
+    return plan !== null && HALVING.has(plan.brackets[0]!.actual) && plan.cost < plain.cost ? plan : plain;
+  }
+
+  /** Values on the plain grid: without brackets, but for halved beats of a compound metre. */
+  function plainPlan(node: MetreNode, edges: readonly number[], inner: readonly number[]): BracketPlan {
+    const plain: BracketPlan = { cost: costOf(weigh(node)), brackets: [] };
+    if (inner.length === 0 || !hasThrees(node)) return plain;
+    if (node.kind === 'units') return halved(node, edges, plain);
+    const parts = node.parts.map((part) => plainPlan(part, edges, inner.filter((edge) => edge > part.start && edge < part.end)));
+    if (parts.every(({ brackets }) => brackets.length === 0)) return plain;
+    return parts.reduce((a, b) => ({ cost: a.cost + b.cost, brackets: [...a.brackets, ...b.brackets] }));
+  }
+
+  function search(node: MetreNode, edges: readonly number[], isNested: boolean): BracketPlan | null {
+    const find = (inside: MetreNode) => search(inside, edges, isNested);
     const inner = edges.filter((edge) => edge > node.start && edge < node.end);
-    if (inner.every(isPlain)) return { cost: costOf(weigh(node)), brackets: [] };
-    let best = overSpan(node.start, node.end, edges);
+    if (inner.every(isPlain)) return plainPlan(node, edges, inner);
+    let best = overSpan(node.start, node.end, edges, isNested);
     if (node.parts.length > 0) {
       // Parts one by one, or two neighbours under one bracket.
       const plans: (BracketPlan | null)[] = [{ cost: 0, brackets: [] }];
       node.parts.forEach((part, index) => {
-        let plan = together(plans[index]!, find(part, edges));
+        let plan = together(plans[index]!, find(part));
         const before = node.parts[index - 1];
         if (before && node.parts.length > 2 && node.kind !== 'groups') plan = cheaper(plan, together(plans[index - 1]!, overTwo(before, part, edges)));
         plans.push(plan);
@@ -110,5 +164,5 @@ export function bracketsOn(whole: number, beat: number, weigh: (span: Bracket | 
     }
     return best;
   }
-  return { find };
+  return { find: (node, edges) => search(node, edges, false), findNested: (node, edges) => search(node, edges, true) };
 }

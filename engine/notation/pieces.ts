@@ -9,8 +9,8 @@ import { type Change, type Frame, framesOf } from './plan';
 export type CountedLine = { readonly grid: Grid; readonly ticks: readonly number[]; readonly rests: readonly boolean[]; readonly total: number };
 
 const LEAST = new Fraction(1, LIMITS.shortestSymbol);
-/** Positions within a bracket are multiplied by its figure, at most 9, and compared with the shortest symbol. */
-const HEADROOM = 9 * LIMITS.shortestSymbol;
+/** Positions within a bracket are multiplied by its figure, at most 9, once more within a nested one, and compared with the shortest symbol. */
+const HEADROOM = 9 * 9 * LIMITS.shortestSymbol;
 
 /**
  * Counts a line on a grid that also holds its measures and the shortest symbol.

@@ -76,19 +76,35 @@ export function measureSpeller(whole: number): MeasureSpeller {
     return pieces.flatMap((piece, n) => split(tree, piece, pieces[n - 1], pieces[n + 1]).map((part) => toDraft(first + n, piece.rest, part)));
   }
 
-  function spellPlain(tree: MetreNode, pieces: readonly Piece[], start: number, end: number): Draft[] {
+  function spellPlain(tree: MetreNode, written: number, pieces: readonly Piece[], start: number, end: number): Draft[] {
     const inside = within(pieces, start, end, 0, 1);
-    return draftsOf(tree, whole, inside.pieces, inside.first);
+    return draftsOf(tree, written, inside.pieces, inside.first);
   }
 
-  function spellBracket(bracket: Bracket, pieces: readonly Piece[]): Draft[] {
-    const { start, end, actual, normal } = bracket;
-    const written = whole * normal;
+  /** What lies in a span, some of it under brackets. @param written - integers of one written whole note */
+  function spellSpan(tree: MetreNode, written: number, pieces: readonly Piece[], brackets: readonly Bracket[], start: number, end: number): Draft[] {
+    const drafts: Draft[] = [];
+    let at = start;
+    for (const bracket of brackets) {
+      if (bracket.start > at) drafts.push(...spellPlain(tree, written, pieces, at, bracket.start));
+      // Within another bracket, beams go by its units.
+      const own = written === whole ? undefined : groupAt(tree, bracket.start);
+      drafts.push(...spellBracket(bracket, written, pieces).map((draft) => (own === undefined ? draft : { ...draft, group: own })));
+      at = bracket.end;
+    }
+    if (at < end) drafts.push(...spellPlain(tree, written, pieces, at, end));
+    return drafts;
+  }
+
+  function spellBracket(bracket: Bracket, outside: number, pieces: readonly Piece[]): Draft[] {
+    const { start, end, actual, normal, inner = [] } = bracket;
+    const written = outside * normal;
     const inside = within(pieces, start, end, start, actual);
-    const drafts = draftsOf(bracketTree(bracket, whole, written / LIMITS.shortestSymbol), written, inside.pieces, inside.first);
+    const tree = bracketTree(bracket, outside, written / LIMITS.shortestSymbol);
+    const drafts = spellSpan(tree, written, inside.pieces, inner, 0, (end - start) * actual);
     return drafts.map((draft, n) => {
       const mark = { actual, normal, ...(n === 0 ? { starts: true as const } : {}), ...(n === drafts.length - 1 ? { stops: true as const } : {}) };
-      return { ...draft, symbol: { ...draft.symbol, tuplets: [mark] } };
+      return { ...draft, piece: inside.first + draft.piece, symbol: { ...draft.symbol, tuplets: [mark, ...draft.symbol.tuplets] } };
     });
   }
 
@@ -99,18 +115,23 @@ export function measureSpeller(whole: number): MeasureSpeller {
 
   function findBrackets(metre: string, tree: MetreNode, pieces: readonly Piece[], ends: readonly number[]): BracketPlan | null {
     const weigh = (span: Bracket | MetreNode): Weight => {
-      const drafts = 'actual' in span ? spellBracket(span, pieces) : spellPlain(tree, pieces, span.start, span.end);
+      const drafts = 'actual' in span ? spellBracket(span, whole, pieces) : spellPlain(tree, whole, pieces, span.start, span.end);
       const tied = drafts.filter(({ symbol, piece }, n) => !symbol.rest && (n === 0 ? pieces[piece]!.start < span.start : drafts[n - 1]!.piece === piece));
       return { symbols: drafts.length, ties: tied.length };
     };
-    return finderFor(metre, weigh).find(tree, [0, ...ends]);
+    const finder = finderFor(metre, weigh);
+    return finder.find(tree, [0, ...ends]) ?? finder.findNested(tree, [0, ...ends]);
   }
 
   const isPlain = (ends: readonly number[]): boolean => ends.every((end) => end % least === 0);
 
   /** Whether some brackets do, whatever they look like. */
-  const canBracket = (metre: string, ends: readonly number[]): boolean =>
-    isPlain(ends) || finderFor(metre, () => NO_WEIGHT).find(trees.of(metre), [0, ...ends]) !== null;
+  function canBracket(metre: string, ends: readonly number[]): boolean {
+    if (isPlain(ends)) return true;
+    const finder = finderFor(metre, () => NO_WEIGHT);
+    const [tree, edges] = [trees.of(metre), [0, ...ends]];
+    return finder.find(tree, edges) !== null || finder.findNested(tree, edges) !== null;
+  }
 
   /** The first piece without whose end, and what follows it, the measure could be written. */
   function firstUnwritable(metre: string, ends: readonly number[], full: number): number {
@@ -123,14 +144,7 @@ export function measureSpeller(whole: number): MeasureSpeller {
     const pieces = ends.map((end, index): Piece => ({ start: index === 0 ? 0 : ends[index - 1]!, end, rest: rests[index]! }));
     const plan = findBrackets(metre, tree, pieces, ends);
     if (plan === null) return firstUnwritable(metre, ends, tree.end);
-    const drafts: Draft[] = [];
-    let at = 0;
-    for (const bracket of plan.brackets) {
-      if (bracket.start > at) drafts.push(...spellPlain(tree, pieces, at, bracket.start));
-      drafts.push(...spellBracket(bracket, pieces));
-      at = bracket.end;
-    }
-    if (at < tree.end) drafts.push(...spellPlain(tree, pieces, at, tree.end));
+    const drafts = spellSpan(tree, whole, pieces, plan.brackets, 0, tree.end);
     const beams = beamsOf(drafts);
     return drafts.map(({ piece, symbol }, index) => ({
       piece,

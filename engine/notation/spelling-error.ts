@@ -15,7 +15,7 @@ export class SpellingError extends EngineError {
       nearest.length === 0
         ? 'Stretch the rhythm, or let it begin elsewhere.'
         : `Stretched ${nearest.map(formatFraction).join(' or ')} times, it can be written.`;
-    super('unspellable', `Value ${value + 1}, of ${formatFraction(length)}, cannot be written in measure ${measure + 1} with notes, ties and one tuplet. ${offer}`);
+    super('unspellable', `Value ${value + 1}, of ${formatFraction(length)}, cannot be written in measure ${measure + 1} with notes, ties and tuplets. ${offer}`);
     this.name = 'SpellingError';
     this.measure = measure;
     this.value = value;

@@ -44,7 +44,7 @@ function explain(study: Study, measures: readonly PlannedMeasure[], plan: MetreP
   const offer = factors.length === 0 ? '' : statement.subject === null ? ` Stretched ${stretches.map(formatFraction).join(' or ')} times, it could.` : ` Factors near it that can: ${factors.join(', ')}.`;
   return new EngineError(
     error.code,
-    `${what} ${statement.index + 1} of “${section.name}” cannot be written with ties and one tuplet: see measure ${measures[error.measure]?.number ?? error.measure + 1}, where a value lasts ${length}.${offer}`,
+    `${what} ${statement.index + 1} of “${section.name}” cannot be written with ties and tuplets: see measure ${measures[error.measure]?.number ?? error.measure + 1}, where a value lasts ${length}.${offer}`,
     { section: section.id },
   );
 }

@@ -92,11 +92,14 @@ function checkValues(measures: readonly NotationMeasure[], rhythm: Rhythm): void
   expect(readBack(measures)).toEqual(asHeard(rhythm));
 }
 
-function checkBrackets({ symbols }: NotationMeasure): void {
+/** How long a symbol lasts inside its bracket of this depth: what stands deeper counts, what stands outside does not. */
+const lengthWithin = (symbol: NotationSymbol, depth: number): Fraction =>
+  symbol.tuplets.slice(depth + 1).reduce((length, { actual, normal }) => length.mul(normal).div(actual), writtenLength(symbol));
+
+function checkDepth(symbols: readonly NotationSymbol[], depth: number): void {
   let open: { actual: number; normal: number; written: Fraction } | null = null;
   for (const symbol of symbols) {
-    const mark = symbol.tuplets[0];
-    expect(symbol.tuplets.length).toBeLessThanOrEqual(1);
+    const mark = symbol.tuplets[depth];
     if (mark === undefined) {
       expect(open).toBeNull();
       continue;
@@ -107,7 +110,9 @@ function checkBrackets({ symbols }: NotationMeasure): void {
     }
     if (open === null) throw new Error('a symbol stands in a bracket that was not opened');
     expect([mark.actual, mark.normal]).toEqual([open.actual, open.normal]);
-    open.written = open.written.add(writtenLength(symbol));
+    open.written = open.written.add(lengthWithin(symbol, depth));
+    // A bracket inside ends before the one outside does.
+    if (depth > 0 && symbol.tuplets[depth - 1]!.stops) expect(mark.stops).toBe(true);
     if (mark.stops) {
       // `actual` units of one written value: a power of two.
       const unit = open.written.div(open.actual);
@@ -117,6 +122,12 @@ function checkBrackets({ symbols }: NotationMeasure): void {
     }
   }
   expect(open).toBeNull();
+}
+
+function checkBrackets({ symbols }: NotationMeasure): void {
+  for (const { tuplets } of symbols) expect(tuplets.length).toBeLessThanOrEqual(2);
+  checkDepth(symbols, 0);
+  checkDepth(symbols, 1);
 }
 
 /** Where beat groups begin, and the end. */

@@ -48,7 +48,7 @@ describe('scoreOf', () => {
     const { error } = staves[0]!;
     expect(error?.code).toBe('unspellable');
     expect(error?.section).toBe('a');
-    expect(error?.message).toMatch(/^At 13\/11 times its length, statement 2 of “Rise” cannot be written with ties and one tuplet: see measure 2, where a value lasts 13\/44\. Factors near it that can: /);
+    expect(error?.message).toMatch(/^At 13\/11 times its length, statement 2 of “Rise” cannot be written with ties and tuplets: see measure 2, where a value lasts 13\/44\. Factors near it that can: /);
     const offered = /that can: (.*)\.$/.exec(error!.message)![1]!.split(', ');
     expect(offered.length).toBeGreaterThan(0);
     for (const factor of offered) {
