@@ -114,8 +114,10 @@ export const proportion: ProcessRules<typeof schema> = {
     return factors.map((factor, index) => {
       const reading = readingOf(process, index);
       const rotation = rotationOf(process, index);
+      const { start, end } = spans[index]!;
       return {
-        ...spans[index]!,
+        start,
+        end,
         length: lengths[index]!,
         instrument: instruments[index % instruments.length]!,
         subject: section.subject ?? null,

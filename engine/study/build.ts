@@ -77,24 +77,26 @@ function separate(values: Placed['values']): Untraced {
 
 function toStatement(placed: Placed, section: string, index: number, sectionStart: Fraction): Statement {
   const { rhythm, origins } = separate(placed.values);
-  return {
+  const statement: { -readonly [K in keyof Statement]: Statement[K] } = {
     id: `${section}.${index}`,
     section,
     index,
     start: sectionStart.add(placed.start),
     length: placed.length,
     instrument: placed.instrument,
-    ...(placed.assigned === undefined ? {} : { assigned: placed.assigned }),
     subject: placed.subject,
     factor: placed.factor,
     reading: placed.reading,
     rotation: placed.rotation,
-    ...(placed.rotationBy === undefined ? {} : { rotationBy: placed.rotationBy }),
-    ...(placed.repeats === undefined || placed.repeats === 1 ? {} : { repeats: placed.repeats }),
     mirrored: placed.mirrored,
     rhythm,
     origins,
   };
+  // Fields that few statements have are put in afterwards: a spread for each would cost more than the rest of the statement.
+  if (placed.assigned !== undefined) statement.assigned = placed.assigned;
+  if (placed.rotationBy !== undefined) statement.rotationBy = placed.rotationBy;
+  if (placed.repeats !== undefined && placed.repeats > 1) statement.repeats = placed.repeats;
+  return statement;
 }
 
 const ordinal = (study: Study, statement: Statement): string => {

@@ -45,18 +45,30 @@ function formSense(study: Study): PalindromeSense {
 
 type Run = { readonly at: number; readonly ticks: number; readonly value: Value };
 
-/** A line with adjacent rests taken together. */
-function runs(rhythm: Rhythm, grid: Grid): Run[] {
-  const result: Run[] = [];
-  let at = 0;
-  for (const value of rhythm) {
-    const ticks = grid.ticks(value.length);
-    const last = result.at(-1);
-    if (value.rest && last?.value.rest) result[result.length - 1] = { ...last, ticks: last.ticks + ticks };
-    else result.push({ at, ticks, value });
-    at += ticks;
+/** A line read from one end, adjacent rests taken together; positions are ticks from the line's start. */
+class Reader {
+  private index: number;
+  private at: number;
+
+  constructor(private readonly rhythm: Rhythm, private readonly grid: Grid, private readonly step: 1 | -1, total: number) {
+    this.index = step === 1 ? 0 : rhythm.length - 1;
+    this.at = step === 1 ? 0 : total;
   }
-  return result;
+
+  /** The next run, null after the last. */
+  next(): Run | null {
+    const value = this.rhythm[this.index];
+    if (value === undefined) return null;
+    let ticks = this.grid.ticks(value.length);
+    this.index += this.step;
+    for (let other = this.rhythm[this.index]; value.rest && other?.rest; other = this.rhythm[this.index]) {
+      ticks += this.grid.ticks(other.length);
+      this.index += this.step;
+    }
+    const from = this.at;
+    this.at += this.step * ticks;
+    return { at: this.step === 1 ? from : this.at, ticks, value };
+  }
 }
 
 const isSame = (a: Run, b: Run): boolean =>
@@ -71,15 +83,25 @@ type Named = { readonly line: Line; readonly name: string };
 
 function valuesSense(lines: readonly Named[], grid: Grid, place: Place): PalindromeSense {
   for (const { line, name } of lines) {
-    const own = runs(line.rhythm, grid);
-    for (let first = 0; first < Math.floor(own.length / 2); first += 1) {
-      const a = own[first]!;
-      const b = own[own.length - 1 - first]!;
+    // From both ends towards the middle; the first that differ are found where a reader would meet them.
+    const total = line.rhythm.reduce((ticks, value) => ticks + grid.ticks(value.length), 0);
+    const front = new Reader(line.rhythm, grid, 1, total);
+    const back = new Reader(line.rhythm, grid, -1, total);
+    for (let a = front.next(), b = back.next(); a && b && a.at < b.at; a = front.next(), b = back.next()) {
       if (isSame(a, b)) continue;
       return fails(`${name}: the value at ${place(grid.fraction(a.at))} differs from the one at ${place(grid.fraction(b.at))}.`);
     }
   }
   return HOLDS;
+}
+
+/** The first of these times, in order, whose mirror image about half of `sum` is none of them. */
+function withoutPartner(times: readonly number[], sum: number): number | undefined {
+  let partner = times.length - 1;
+  return times.find((at) => {
+    while (partner >= 0 && times[partner]! > sum - at) partner -= 1;
+    return times[partner] !== sum - at;
+  });
 }
 
 function attacksSense(lines: readonly Named[], grid: Grid, place: Place): PalindromeSense {
@@ -97,8 +119,7 @@ function attacksSense(lines: readonly Named[], grid: Grid, place: Place): Palind
   for (const [index, own] of times.entries()) {
     // In order of time the first attack's partner is the last, and so on inwards.
     if (own.every((at, n) => at + own[own.length - 1 - n]! === first + last)) continue;
-    const set = new Set(own);
-    const odd = own.find((at) => !set.has(first + last - at));
+    const odd = withoutPartner(own, first + last);
     if (odd !== undefined) {
       return fails(`${lines[index]!.name}: the attack at ${place(grid.fraction(odd))} has no partner at ${place(grid.fraction(first + last - odd))}.`);
     }
