@@ -31,8 +31,8 @@ export type EngineErrorCode =
   | 'mirror_ring'
   /** two statements at once on one instrument */
   | 'overlap'
-  /** a process that is part of the document format, but not built yet */
-  | 'not_supported'
+  /** a way of writing that a section does not allow */
+  | 'cannot_write'
   /** a value that cannot be written in the metre */
   | 'unspellable';
 

@@ -55,10 +55,14 @@ export {
   placeWords,
   planMeasures,
   tempoOf,
+  writingOf,
   type MetreChange,
   type PlannedMeasure,
 } from './views/measures';
 export type { Repeat } from './views/repeats';
+export { stretchedMetre, type Writing } from './views/writing';
+export { perMinuteText, tempoMarks, type TempoMark } from './views/tempo-marks';
+export { compareWritings, legibilityOf, legibilityWords, type Legibility, type WritingChoice } from './views/legibility';
 export { scoreOf, type Score, type Staff } from './views/score';
 export { playEvents } from './views/play-events';
 export { threadsOf, type Thread, type ThreadReading, type ThreadRow, type ThreadTick, type Threads } from './views/threads';
@@ -76,3 +80,11 @@ export { sectionSentence } from './describe/sentence';
 export { readingWords, rotationWords, stepWords, type FieldControl, type FieldInput, type SentenceControl, type SentencePart } from './describe/sentence-parts';
 export { mirrorWords, sectionRemarks, sectionSum, studyMetres, studySum, sumWords, type Remark, type Sum } from './describe/sums';
 export { inSentence, measureNumber, measureWords, valueName, type DescribeOptions, type ValueNames } from './describe/words';
+
+export { countSubjects, generateSubject } from './subjects/generate';
+export { NoSubjectError, type GeneratedSubject, type SubjectConstraint, type SubjectConstraints } from './subjects/types';
+export { countPatterns, type PatternCounts } from './subjects/count-patterns';
+export { goldenSection } from './subjects/golden-section';
+export { CATALOGUE } from './subjects/catalogue/catalogue';
+export { searchCatalogue, type CatalogueQuery } from './subjects/catalogue/search-catalogue';
+export type { CatalogueEntry, CatalogueFamily } from './subjects/catalogue/figure';

@@ -205,6 +205,8 @@ export function drawSystem(vf: VexFlow, host: HTMLDivElement, score: DrawnScore,
     const { formatter, voices } = formatters[column]!;
     if (voices.length > 0) formatter.format(voices, drawn[0]!.getNoteEndX() - start - 12 - (score.signs?.[first + column]?.times === undefined ? 0 : REPEAT_SIGN / 2));
     const from = planned.start.valueOf();
+    // Written lengths last so much longer.
+    const sounding = planned.scale.valueOf();
     places.push([from, start * scale]);
     cells.forEach(({ notes, voice, beams, tuplets }, row) => {
       if (notes.length === 0) return;
@@ -218,7 +220,7 @@ export function drawSystem(vf: VexFlow, host: HTMLDivElement, score: DrawnScore,
       for (const one of notes) {
         const { symbol, note } = one;
         mark(staves[row]!, one);
-        if (!symbol.rest) places.push([from + one.at, note.getAbsoluteX() * scale]);
+        if (!symbol.rest) places.push([from + one.at * sounding, note.getAbsoluteX() * scale]);
         if (symbol.tiedFromBefore) {
           new vf.StaveTie({ firstNote: previous[row]?.note ?? null, lastNote: note, firstIndexes: [0], lastIndexes: [0] })
             .setDirection(1)

@@ -43,7 +43,7 @@ export function measureWidth(score: DrawnScore, index: number): number {
     });
   }
   const sorted = [...starts.keys()].sort((a, b) => a - b);
-  const length = planned.length.valueOf();
+  const length = planned.length.div(planned.scale).valueOf();
   const room = sorted.reduce((sum, key, n) => {
     const gap = ((sorted[n + 1] ?? length * 1e7) - key) / 1e7;
     return sum + 15 + 7 * Math.log2(1 + 32 * Math.max(gap, 0)) + starts.get(key)!;

@@ -6,6 +6,8 @@ import { ScoreLines } from '../score/score-lines';
 import type { DrawnScore } from '../score/spec';
 import { useStudy } from './context';
 
+const ONE = new Fraction(1);
+
 type Spelled = { readonly score: DrawnScore } | { readonly error: string } | null;
 
 function spell(text: string, metre: Metre, sounds: number | undefined): Spelled {
@@ -21,6 +23,7 @@ function spell(text: string, metre: Metre, sounds: number | undefined): Spelled 
           number: index + 1,
           start: new Fraction(index).mul(length),
           length,
+          scale: ONE,
           metre: measure.metre,
           signature: index === 0 ? metre : null,
         })),

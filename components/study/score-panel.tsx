@@ -1,12 +1,12 @@
 'use client';
 
 import { type MouseEvent, useCallback, useEffect, useMemo, useRef, useState } from 'react';
-import { measureAt, metreOf, scoreOf } from '@/engine';
+import { type Fraction, type TempoMark, measureAt, metreOf, perMinuteText, scoreOf, tempoMarks, valueName } from '@/engine';
 import { ScoreLines } from '../score/score-lines';
 import type { SystemDrawing } from '../score/draw';
 import { foldScore } from '../score/fold';
 import type { DrawnScore, SystemSpec } from '../score/spec';
-import { subjectOf, useStudy } from './context';
+import { subjectOf, useStudy, useValueNames } from './context';
 
 /** The x of a position within a system, between the two drawn places about it. */
 function xAt({ places }: SystemDrawing, position: number): number {
@@ -17,8 +17,20 @@ function xAt({ places }: SystemDrawing, position: number): number {
   return b === a ? xb : xa + ((xb - xa) * (position - a)) / (b - a);
 }
 
+/** A tempo as it is printed: the equivalence first where there is one, then what the metronome shows. */
+function Tempo({ mark: { beat, perMinute, equivalence } }: { mark: TempoMark }) {
+  const valueNames = useValueNames();
+  const name = (length: Fraction) => valueName(length, valueNames);
+  return (
+    <span data-testid="tempo-mark" className="text-[12.5px] italic">
+      {equivalence && `${name(equivalence.before)} = ${name(equivalence.after)}, `}
+      {`${name(beat)} = ${perMinuteText(perMinute)}`}
+    </span>
+  );
+}
+
 /** Measure numbers, and the name of a section where it begins. */
-function Overlay({ spec, drawing, score }: { spec: SystemSpec; drawing: SystemDrawing | null; score: DrawnScore }) {
+function Overlay({ spec, drawing, score, marks }: { spec: SystemSpec; drawing: SystemDrawing | null; score: DrawnScore; marks: ReadonlyMap<number, TempoMark> }) {
   const { state } = useStudy();
   const { study, built } = state;
   if (!drawing) return null;
@@ -32,6 +44,7 @@ function Overlay({ spec, drawing, score }: { spec: SystemSpec; drawing: SystemDr
         return (
           <span key={measure.index} className="absolute top-0 flex items-baseline gap-2 whitespace-nowrap" style={{ left: left + 2 }}>
             <span className="text-[11.5px] text-soft">{measure.number}</span>
+            {marks.has(measure.index) && <Tempo mark={marks.get(measure.index)!} />}
             {section && (
               <span className="text-[14px] font-semibold">
                 {section.name}
@@ -80,6 +93,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
     }),
     [made],
   );
+  const marks = useMemo(() => new Map(tempoMarks(study, built, made.measures).map((mark) => [mark.measure, mark])), [study, built, made]);
   const { score, fold } = useMemo(() => foldScore(whole, made.repeats), [whole, made]);
   const failures = made.staves.flatMap(({ instrument, error }) => (error ? [{ instrument, error }] : []));
 
@@ -167,6 +181,11 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
           Show silent staves
         </label>
       </div>
+      {made.refusals.map(({ section: id, message }) => (
+        <p key={id} role="alert" className="mb-2 text-[14px] text-mark">
+          {message}
+        </p>
+      ))}
       {failures.map(({ instrument, error }) => (
         <p key={instrument.id} role="alert" className="mb-2 text-[14px] text-mark">
           {`${instrument.name} cannot be written: ${error.message}`}
@@ -192,7 +211,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
         >
           {(spec, drawing) => (
             <>
-              <Overlay spec={spec} drawing={drawing} score={score} />
+              <Overlay spec={spec} drawing={drawing} score={score} marks={marks} />
               <div data-cursor hidden className="pointer-events-none absolute left-0 w-[2px] bg-ink" style={{ top: 20, height: spec.height - 40 }} />
             </>
           )}

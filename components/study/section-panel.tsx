@@ -25,6 +25,7 @@ import { BeforeControl } from './before-control';
 import { attempt, useStudy } from './context';
 import { ProcessSentence } from './process-sentence';
 import { RhythmField } from './rhythm-field';
+import { WritingControl } from './writing-control';
 
 function Sum({ section }: { section: Section }) {
   const { editor, state } = useStudy();
@@ -147,6 +148,7 @@ function SectionTools({ section }: { section: Section }) {
           {() => <BeforeControl section={section} />}
         </Token>
       )}
+      {section.kind !== 'free' && state.built.statements.some((one) => one.section === section.id && !one.factor.equals(1)) && <WritingControl section={section} />}
       <TextButton disabled={index === 0} onClick={() => setError(attempt(editor, () => moveSection(section.id, -1)))}>
         Move earlier
       </TextButton>

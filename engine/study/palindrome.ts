@@ -2,7 +2,7 @@ import { EngineError } from '../errors';
 import { type Fraction, formatFraction } from '../exact/fraction';
 import { type Grid, gridFor } from '../exact/grid';
 import type { RetrogradeBy, Rhythm, Value } from '../rhythm/types';
-import { type Extent, type PlannedMeasure, placeWords, planMeasures } from '../views/measures';
+import { type Written, type PlannedMeasure, placeWords, planMeasures } from '../views/measures';
 import type { Section, Study } from './schema';
 import type { BuiltStudy, Line, Palindrome, PalindromeSense } from './types';
 
@@ -128,7 +128,7 @@ function attacksSense(lines: readonly Named[], grid: Grid, place: Place): Palind
 }
 
 /** Places in words; measures are only counted once a place is asked for. */
-function placeIn(study: Study, built: Extent): Place {
+function placeIn(study: Study, built: Written): Place {
   let measures: PlannedMeasure[] | undefined;
   return (position) => {
     try {

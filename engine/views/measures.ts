@@ -4,36 +4,43 @@ import { LIMITS } from '../limits';
 import { type Metre, metreOfLength, parseMetre } from '../rhythm/metre';
 import type { Study } from '../study/schema';
 import type { BuiltStudy } from '../study/types';
-import { metreOf } from './metre-of';
+import { writtenSpans } from './writing';
 
-export { metreOf, tempoOf } from './metre-of';
+export { metreOf, tempoOf, writingOf } from './metre-of';
 
-/** What decides measures and time: the sections and the whole length. */
+/** What decides time: the sections and the whole length. */
 export type Extent = Pick<BuiltStudy, 'sections' | 'totalLength'>;
+/** What decides measures: also the statements, which may be written in metres or tempos of their own. */
+export type Written = Extent & Pick<BuiltStudy, 'statements'>;
 
-export type MetreChange = { readonly at: Fraction; readonly metre: Metre };
+export type MetreChange = {
+  /** from the study's start, in whole notes that sound */
+  readonly at: Fraction;
+  readonly metre: Metre;
+  /** how much longer it sounds than it is written */
+  readonly scale: Fraction;
+};
 
 /**
- * The metres of a study, for `spellLine`: a pickup is a first measure cut short; a section in another metre begins a new
- * measure.
+ * The metres of a study: a pickup is a first measure cut short; a section in another metre, and a stretch that is written as
+ * another tempo, begin a new measure.
  */
-export function metrePlan(study: Study, built: Extent): MetreChange[] {
+export function metrePlan(study: Study, built: Written): MetreChange[] {
   const changes: MetreChange[] = [];
-  let current: Metre | undefined;
-  study.sections.forEach((section, index) => {
-    const metre = metreOf(study, section);
-    if (metre === current) return;
-    const at = built.sections[index]!.start;
+  for (const { start: at, metre, scale } of writtenSpans(study, built).spans) {
+    const last = changes.at(-1);
+    if (last !== undefined && last.metre === metre && last.scale.equals(scale)) continue;
     // A section of no length leaves two changes at one place: the later one holds.
-    if (changes.at(-1)?.at.equals(at)) changes.pop();
-    changes.push({ at, metre });
-    current = metre;
-  });
+    if (last?.at.equals(at)) changes.pop();
+    const before = changes.at(-1);
+    if (before !== undefined && before.metre === metre && before.scale.equals(scale)) continue;
+    changes.push({ at, metre, scale });
+  }
   const pickup = study.pickup === undefined ? ZERO : toFraction(study.pickup);
   if (pickup.compare(ZERO) > 0) {
     const first = changes[0]!;
     const isCut = changes[1] !== undefined && changes[1].at.compare(pickup) <= 0;
-    if (!isCut) changes.splice(1, 0, { at: pickup, metre: first.metre });
+    if (!isCut) changes.splice(1, 0, { ...first, at: pickup });
   }
   return changes;
 }
@@ -43,8 +50,12 @@ export type PlannedMeasure = {
   readonly index: number;
   /** as printed: from 1, a pickup being 0 */
   readonly number: number;
+  /** in whole notes that sound, from the study's start */
   readonly start: Fraction;
+  /** in whole notes that sound */
   readonly length: Fraction;
+  /** how much longer it sounds than it is written: 1 but where a stretch is written as a slower tempo */
+  readonly scale: Fraction;
   /** the metre that it is written in */
   readonly metre: Metre;
   /** the time signature that is printed before it, null where the one before still holds */
@@ -73,13 +84,13 @@ function withSignatures(measures: readonly PlannedMeasure[], pickupMetre: Metre 
 }
 
 /** Every measure of a study, in order. The last may reach beyond the end of the piece. */
-export function planMeasures(study: Study, built: Extent): PlannedMeasure[] {
+export function planMeasures(study: Study, built: Written): PlannedMeasure[] {
   const plan = metrePlan(study, built);
   const measures: PlannedMeasure[] = [];
   const first = study.pickup !== undefined && plan.length > 1 && plan[1]!.metre === plan[0]!.metre ? 0 : 1;
-  plan.forEach(({ at, metre }, change) => {
+  plan.forEach(({ at, metre, scale }, change) => {
     const end = plan[change + 1]?.at ?? built.totalLength;
-    const { length } = parseMetre(metre);
+    const length = parseMetre(metre).length.mul(scale);
     const isLast = change === plan.length - 1;
     const whole = end.sub(at).div(length);
     const count = Number(whole.ceil().n);
@@ -94,7 +105,8 @@ export function planMeasures(study: Study, built: Extent): PlannedMeasure[] {
         number: index + first,
         start,
         length: own,
-        metre: isCut ? cutMetre(own, metre) : parseMetre(metre).text,
+        scale,
+        metre: isCut ? cutMetre(own.div(scale), metre) : parseMetre(metre).text,
         signature: null,
       });
     }
@@ -118,6 +130,6 @@ export function measureAt(measures: readonly PlannedMeasure[], position: Fractio
 export function placeWords(measures: readonly PlannedMeasure[], position: Fraction): string {
   const measure = measureAt(measures, position);
   if (measure === undefined) return 'the beginning';
-  const beat = position.sub(measure.start).mul(parseMetre(measure.metre).unit).add(1);
+  const beat = position.sub(measure.start).div(measure.scale).mul(parseMetre(measure.metre).unit).add(1);
   return `measure ${measure.number}, beat ${beat.toFraction(true)}`;
 }

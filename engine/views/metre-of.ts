@@ -1,7 +1,7 @@
 import type { Metre } from '../rhythm/metre';
 import type { MirrorSection, Section, Study } from '../study/schema';
 
-function inherited<K extends 'metre' | 'tempo'>(study: Study, section: Section, field: K): NonNullable<Section[K]> | undefined {
+function inherited<K extends 'metre' | 'tempo' | 'writing'>(study: Study, section: Section, field: K): NonNullable<Section[K]> | undefined {
   const seen = new Set<string>();
   let one: Section | undefined = section;
   while (one !== undefined && one[field] === undefined && one.kind === 'mirror' && !seen.has(one.id)) {
@@ -17,3 +17,6 @@ export const metreOf = (study: Study, section: Section): Metre => inherited(stud
 
 /** The tempo of a section: its own, or that of what it mirrors, or the study's. */
 export const tempoOf = (study: Study, section: Section): Study['tempo'] => inherited(study, section, 'tempo') ?? study.tempo;
+
+/** How a stretch is written in a section: as it says itself, or as what it mirrors does, or in longer values. */
+export const writingOf = (study: Study, section: Section): 'values' | 'tempo' | 'metre' => inherited(study, section, 'writing') ?? 'values';

@@ -10,12 +10,14 @@ import type { Instrument, Study } from '../study/schema';
 import type { BuiltStudy } from '../study/types';
 import { type PlannedMeasure, metrePlan, planMeasures } from './measures';
 import { type Repeat, repeatsOf } from './repeats';
+import { isUnscaled, writtenLine, writtenPlan } from './written-line';
+import { writtenSpans } from './writing';
 
 export type Staff = {
   readonly instrument: Instrument;
   /** one for each planned measure; empty where the line cannot be written */
   readonly measures: readonly NotationMeasure[];
-  /** the line that is spelled: symbols point into it by index */
+  /** the line that is spelled, at its written lengths: symbols point into it by index */
   readonly values: Rhythm;
   /** for each value of the line, the statement that it belongs to */
   readonly sources: readonly LineSource[];
@@ -28,16 +30,21 @@ export type Score = {
   readonly staves: readonly Staff[];
   /** what is printed once and played several times, in order */
   readonly repeats: readonly Repeat[];
+  /** sections that cannot be written as they ask, and why; they are written in longer values */
+  readonly refusals: readonly EngineError[];
 };
 
-/** A refusal to spell, told of the statement it happens in, with the factors near its own that can be written there. */
-function explain(study: Study, measures: readonly PlannedMeasure[], plan: MetrePlan, sources: readonly LineSource[], error: EngineError): EngineError {
+/**
+ * A refusal to spell, told of the statement it happens in, with the factors near its own that can be written there.
+ * @param plan - null where stretches are written as tempos, and other factors would change them
+ */
+function explain(study: Study, measures: readonly PlannedMeasure[], plan: MetrePlan | null, sources: readonly LineSource[], error: EngineError): EngineError {
   const source = error instanceof SpellingError ? sources[error.value] : null;
   if (!(error instanceof SpellingError) || !source) return error;
   const { statement } = source;
   const section = study.sections.find(({ id }) => id === statement.section)!;
   const lead: Rhythm = statement.start.n === 0n ? [] : [{ length: statement.start, rest: true }];
-  const stretches = nearestFactors(statement.rhythm, (stretched) => canSpell([...lead, ...stretched], plan));
+  const stretches = plan === null ? [] : nearestFactors(statement.rhythm, (stretched) => canSpell([...lead, ...stretched], plan));
   const factors = stretches.map((stretch) => formatFraction(statement.factor.mul(stretch)));
   const length = formatFraction(statement.rhythm[source.value]!.length);
   const what = statement.subject === null ? 'Line' : `At ${formatFraction(statement.factor)} times its length, statement`;
@@ -51,19 +58,20 @@ function explain(study: Study, measures: readonly PlannedMeasure[], plan: MetreP
 
 /** The whole score: every instrument's line, spelled in the study's metres, with the way back to its statements. */
 export function scoreOf(study: Study, built: BuiltStudy): Score {
-  const plan = metrePlan(study, built);
+  const sounding = metrePlan(study, built);
+  const plan = writtenPlan(sounding);
   const measures = planMeasures(study, built);
   const places = placesOf(built.statements, built.totalLength);
   const staves = study.instruments.map((instrument): Staff => {
     const own = statementsOf(built.statements, instrument.id, places);
-    const values = assembleLine(own, built.totalLength, places);
-    const sources = lineSources(own, built.totalLength, places);
+    const line = { values: assembleLine(own, built.totalLength, places), sources: lineSources(own, built.totalLength, places) };
+    const { values, sources } = isUnscaled(sounding) ? line : writtenLine(line.values, line.sources, sounding);
     try {
       return { instrument, measures: spellLine(values, plan), values, sources };
     } catch (error) {
       if (!(error instanceof EngineError)) throw error;
-      return { instrument, measures: [], values, sources, error: explain(study, measures, plan, sources, error) };
+      return { instrument, measures: [], values, sources, error: explain(study, measures, isUnscaled(sounding) ? plan : null, sources, error) };
     }
   });
-  return { measures, staves, repeats: repeatsOf(measures, staves, built) };
+  return { measures, staves, repeats: repeatsOf(measures, staves, built), refusals: writtenSpans(study, built).refusals };
 }

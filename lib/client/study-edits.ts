@@ -11,6 +11,7 @@ import {
   type Section,
   type Study,
   type StudyInput,
+  type Writing,
   formatFraction,
   parseRhythm,
   proportionFactors,
@@ -98,6 +99,9 @@ export const setProcessKind = (id: string, kind: ProcessKind): Edit => (study) =
   const process = { ...begun, ...kept } as Process;
   return mapProcess(id, (one) => ({ ...one, process, instruments, ...(rules.takesSubject && subjects ? { subject: subjects.id } : {}) }))(study);
 };
+
+/** How a stretch is written in a section. */
+export const setWriting = (id: string, writing: Writing): Edit => mapSection(id, (section) => ({ ...section, writing }));
 
 /** What is done to the subject before the process. */
 export const setBefore = (id: string, before: ProcessSection['before']): Edit =>

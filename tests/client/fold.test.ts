@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { Fraction, type PlannedMeasure } from '@/engine';
 import { foldScore } from '@/components/score/fold';
 
-const measures = Array.from({ length: 10 }, (_, index): PlannedMeasure => ({ index, number: index + 1, start: new Fraction(index), length: new Fraction(1), metre: '4/4', signature: index === 0 ? '4/4' : null }));
+const measures = Array.from({ length: 10 }, (_, index): PlannedMeasure => ({ index, number: index + 1, start: new Fraction(index), length: new Fraction(1), scale: new Fraction(1), metre: '4/4', signature: index === 0 ? '4/4' : null }));
 const whole = { measures, staves: [] };
 
 describe('what is repeated is printed once', () => {
