@@ -28,11 +28,12 @@ type Changes = Partial<Pick<Account, 'name' | 'valueNames' | 'paperSize'>>;
 function useChange() {
   const client = useQueryClient();
   const router = useRouter();
-  const { mutate, isPending, error, variables } = useMutation(updateAccountMutation());
+  const { mutate, isPending, error } = useMutation(updateAccountMutation());
   const [done, setDone] = useState<string | null>(null);
-  const change = (changes: Changes, words: string) => {
+  const change = (changes: Changes, words: string, onError?: () => void) => {
     setDone(null);
     mutate(changes, {
+      ...(onError ? { onError } : {}),
       onSuccess: (body) => {
         client.setQueryData(accountQuery().queryKey, body);
         setDone(words);
@@ -41,7 +42,7 @@ function useChange() {
       },
     });
   };
-  return { change, isPending, done, sent: isPending ? variables : undefined, errors: error ? errorsOfAnswer(error) : {} };
+  return { change, isPending, done, errors: error ? errorsOfAnswer(error) : {} };
 }
 
 const Done = ({ text }: { text: string | null }) => (
@@ -82,12 +83,17 @@ function Choice<K extends 'valueNames' | 'paperSize'>({
   options: readonly (readonly [Account[K], string])[];
   words: Record<Account[K], string>;
 }) {
-  const { change, done, sent, errors } = useChange();
+  const { change, done, errors } = useChange();
   // What has been chosen shows at once; a refusal takes it back.
-  const value = { ...account, ...sent }[field];
+  const [chosen, setChosen] = useState<Account[K] | null>(null);
+  const value = chosen ?? account[field];
+  const choose = (next: Account[K]) => {
+    setChosen(next);
+    change({ [field]: next } as Changes, 'Kept.', () => setChosen(null));
+  };
   return (
     <>
-      <Segments label={label} value={value} options={options} onChange={(value) => change({ [field]: value } as Changes, 'Kept.')} />
+      <Segments label={label} value={value} options={options} onChange={choose} />
       <p className="mt-2 text-[14px] text-soft">{words[value]}</p>
       {Object.values(errors)[0] && (
         <p role="alert" className="mt-1 text-[13.5px] text-mark">
