@@ -61,7 +61,7 @@ export {
 } from './views/measures';
 export type { Repeat } from './views/repeats';
 export { stretchedMetre, type Writing } from './views/writing';
-export { perMinuteText, tempoMarks, type TempoMark } from './views/tempo-marks';
+export { tempoMarkWords, tempoMarks, type TempoMark } from './views/tempo-marks';
 export { compareWritings, legibilityOf, legibilityWords, type Legibility, type WritingChoice } from './views/legibility';
 export { scoreOf, type Score, type Staff } from './views/score';
 export { playEvents } from './views/play-events';

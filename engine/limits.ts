@@ -50,4 +50,10 @@ export const LIMITS = {
   pulses: 1_024,
   /** lengths of a ladder or an alignment */
   lengths: 1_024,
+  /** places, attacks and values that a search for subjects may combine */
+  subjectStates: 2_000_000,
+  /** pulses that a search through sets of attacks may look at */
+  subjectSteps: 2_000_000,
+  /** sets of attacks that are gone through once one is found */
+  subjectSets: 2_000,
 } as const;

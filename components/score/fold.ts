@@ -1,5 +1,5 @@
 import type { PlannedMeasure, Repeat } from '@/engine';
-import type { DrawnScore, RepeatSigns } from './spec';
+import type { DrawnScore, MeasureSigns } from './spec';
 
 /** How the measures of a piece and those that are printed correspond. */
 export type Fold = {
@@ -11,25 +11,33 @@ export type Fold = {
 
 type Block = { readonly from: number; readonly to: number; readonly length: number };
 
-/** Leaves out what is printed already: the figure of each repeat stands once, between repeat signs. */
-export function foldScore(score: DrawnScore, repeats: readonly Repeat[]): { score: DrawnScore; fold: Fold } {
+/** Pixels of a letter over the staff, and of the measure's number beside it. */
+const LETTER = 6.4;
+const NUMBER = 34;
+
+/**
+ * Leaves out what is printed already: the figure of each repeat stands once, between repeat signs.
+ * @param words - what stands over a measure, by its index, so that it is given room
+ */
+export function foldScore(score: DrawnScore, repeats: readonly Repeat[], words: ReadonlyMap<number, string> = new Map()): { score: DrawnScore; fold: Fold } {
   const kept: number[] = [];
-  const signs: RepeatSigns[] = [];
+  const signs: MeasureSigns[] = [];
   const printed: number[] = [];
   const ahead = [...repeats];
+  const roomFor = (index: number): MeasureSigns => (words.has(index) ? { room: NUMBER + words.get(index)!.length * LETTER } : {});
   for (let index = 0; index < score.measures.length; ) {
     const repeat = ahead[0]?.first === index ? ahead.shift() : undefined;
     if (repeat === undefined) {
       printed[index] = kept.length;
       kept.push(index);
-      signs.push({});
+      signs.push(roomFor(index));
       index += 1;
       continue;
     }
     const base = kept.length;
     for (let n = 0; n < repeat.length; n += 1) {
       kept.push(index + n);
-      signs.push({ ...(n === 0 ? { begins: true } : {}), ...(n === repeat.length - 1 ? { times: repeat.times } : {}) });
+      signs.push({ ...roomFor(index + n), ...(n === 0 ? { begins: true } : {}), ...(n === repeat.length - 1 ? { times: repeat.times } : {}) });
     }
     for (let n = 0; n < repeat.length * repeat.times; n += 1) printed[index + n] = base + (n % repeat.length);
     index += repeat.length * repeat.times;
@@ -48,7 +56,7 @@ export function foldScore(score: DrawnScore, repeats: readonly Repeat[]): { scor
   };
   const staves = repeats.length === 0 ? score.staves : score.staves.map((staff) => ({ ...staff, measures: staff.measures.length === 0 ? [] : kept.map((index) => staff.measures[index]!) }));
   return {
-    score: repeats.length === 0 ? score : { measures: kept.map((index) => score.measures[index]!), staves, signs },
+    score: repeats.length === 0 && words.size === 0 ? score : { measures: kept.map((index) => score.measures[index]!), staves, signs },
     fold: { printed: (index) => printed[index] ?? index, place },
   };
 }

@@ -49,8 +49,8 @@ export function measureWidth(score: DrawnScore, index: number): number {
     return sum + 15 + 7 * Math.log2(1 + 32 * Math.max(gap, 0)) + starts.get(key)!;
   }, 0);
   const signature = planned.signature === null ? 0 : SIGNATURE;
-  const { begins, times } = score.signs?.[index] ?? {};
-  return Math.max(times === undefined ? 58 : 96, room + 26) + signature + (begins ? REPEAT_SIGN : 0) + (times === undefined ? 0 : REPEAT_SIGN);
+  const { begins, times, room: above = 0 } = score.signs?.[index] ?? {};
+  return Math.max(times === undefined ? 58 : 96, above, room + 26) + signature + (begins ? REPEAT_SIGN : 0) + (times === undefined ? 0 : REPEAT_SIGN);
 }
 
 /** Breaks measures into systems that fill the width; a system keeps at least one measure. */

@@ -13,19 +13,22 @@ export type DrawnStaff = {
   readonly sources: readonly ({ readonly statement: string; readonly origin: number | null } | null)[];
 };
 
-/** Repeat signs about a printed measure. */
-export type RepeatSigns = {
+/** What stands about a printed measure. */
+export type MeasureSigns = {
+  /** whether a repeat begins here */
   readonly begins?: boolean;
   /** how often what ends here is played */
   readonly times?: number;
+  /** CSS pixels that the words over it take */
+  readonly room?: number;
 };
 
 /** What is printed: measures that are repeated stand once, so that their `index` may jump. */
 export type DrawnScore = {
   readonly measures: readonly PlannedMeasure[];
   readonly staves: readonly DrawnStaff[];
-  /** one for each printed measure; without it, nothing is repeated */
-  readonly signs?: readonly RepeatSigns[];
+  /** one for each printed measure; without it, nothing stands there */
+  readonly signs?: readonly MeasureSigns[];
 };
 
 /** One line of the page: so many measures of so many staves. */

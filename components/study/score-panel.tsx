@@ -1,7 +1,7 @@
 'use client';
 
 import { type MouseEvent, useCallback, useEffect, useMemo, useRef, useState } from 'react';
-import { type Fraction, type TempoMark, measureAt, metreOf, perMinuteText, scoreOf, tempoMarks, valueName } from '@/engine';
+import { measureAt, metreOf, scoreOf, tempoMarkWords, tempoMarks } from '@/engine';
 import { ScoreLines } from '../score/score-lines';
 import type { SystemDrawing } from '../score/draw';
 import { foldScore } from '../score/fold';
@@ -17,20 +17,8 @@ function xAt({ places }: SystemDrawing, position: number): number {
   return b === a ? xb : xa + ((xb - xa) * (position - a)) / (b - a);
 }
 
-/** A tempo as it is printed: the equivalence first where there is one, then what the metronome shows. */
-function Tempo({ mark: { beat, perMinute, equivalence } }: { mark: TempoMark }) {
-  const valueNames = useValueNames();
-  const name = (length: Fraction) => valueName(length, valueNames);
-  return (
-    <span data-testid="tempo-mark" className="text-[12.5px] italic">
-      {equivalence && `${name(equivalence.before)} = ${name(equivalence.after)}, `}
-      {`${name(beat)} = ${perMinuteText(perMinute)}`}
-    </span>
-  );
-}
-
 /** Measure numbers, and the name of a section where it begins. */
-function Overlay({ spec, drawing, score, marks }: { spec: SystemSpec; drawing: SystemDrawing | null; score: DrawnScore; marks: ReadonlyMap<number, TempoMark> }) {
+function Overlay({ spec, drawing, score, marks }: { spec: SystemSpec; drawing: SystemDrawing | null; score: DrawnScore; marks: ReadonlyMap<number, string> }) {
   const { state } = useStudy();
   const { study, built } = state;
   if (!drawing) return null;
@@ -44,7 +32,11 @@ function Overlay({ spec, drawing, score, marks }: { spec: SystemSpec; drawing: S
         return (
           <span key={measure.index} className="absolute top-0 flex items-baseline gap-2 whitespace-nowrap" style={{ left: left + 2 }}>
             <span className="text-[11.5px] text-soft">{measure.number}</span>
-            {marks.has(measure.index) && <Tempo mark={marks.get(measure.index)!} />}
+            {marks.has(measure.index) && (
+              <span data-testid="tempo-mark" className="text-[12.5px] italic">
+                {marks.get(measure.index)}
+              </span>
+            )}
             {section && (
               <span className="text-[14px] font-semibold">
                 {section.name}
@@ -93,8 +85,9 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
     }),
     [made],
   );
-  const marks = useMemo(() => new Map(tempoMarks(study, built, made.measures).map((mark) => [mark.measure, mark])), [study, built, made]);
-  const { score, fold } = useMemo(() => foldScore(whole, made.repeats), [whole, made]);
+  const valueNames = useValueNames();
+  const marks = useMemo(() => new Map(tempoMarks(study, built, made.measures).map((mark) => [mark.measure, tempoMarkWords(mark, valueNames)])), [study, built, made, valueNames]);
+  const { score, fold } = useMemo(() => foldScore(whole, made.repeats, marks), [whole, made, marks]);
   const failures = made.staves.flatMap(({ instrument, error }) => (error ? [{ instrument, error }] : []));
 
   const section = study.sections.find(({ id }) => id === selection.section)!;

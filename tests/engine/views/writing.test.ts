@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
   EngineError, Fraction, type Study, type StudyInput, type Writing,
-  buildStudy, compareWritings, formatFraction, formatRhythm, legibilityOf, legibilityWords, parseMetre, parseRhythm, parseStudy, playEvents, scoreOf, secondsOf, spellLine, stretchedMetre, symbolLength, tempoMarks, toFraction,
+  buildStudy, compareWritings, formatFraction, formatRhythm, legibilityOf, legibilityWords, parseMetre, parseRhythm, parseStudy, playEvents, scoreOf, secondsOf, spellLine, stretchedMetre, symbolLength, tempoMarkWords, tempoMarks, toFraction,
 } from '@/engine';
 import { plainRhythm } from '../notation/arbitrary-line';
 import { shorthand } from '../notation/shorthand';
@@ -87,6 +87,19 @@ describe('a new tempo with its equivalence', () => {
       // 2 to 3/2 is 4/3: a dotted quarter lasts as long as a half did
       [2, '1/4', '30', '1/2 = 3/8'],
     ]);
+  });
+});
+
+describe('tempo marks in words', () => {
+  const words = (factors: string[], names?: 'british') => {
+    const document = written(factors, 'tempo');
+    return tempoMarks(document, buildStudy(document)).map((mark) => tempoMarkWords(mark, names));
+  };
+  it('where no two plain values last as long, two are tied', () => {
+    expect(words(['1', '5/4', '3/2'])).toEqual(['quarter = 60', 'quarter tied to sixteenth = quarter, quarter = 48', 'dotted quarter = quarter tied to sixteenth, quarter = 40']);
+  });
+  it('in British names; and where nothing does, the metronome alone', () => {
+    expect(words(['1', '3/2', '1/7'], 'british')).toEqual(['crotchet = 60', 'dotted crotchet = crotchet, crotchet = 40', 'crotchet = 420']);
   });
 });
 
