@@ -15,6 +15,7 @@ export { rotate, type RotateBy } from './transform/rotate';
 export { applySteps, type Step } from './transform/steps';
 
 export { ladder, type Ladder } from './proportion/ladder';
+export { checkLadder, claimWords, type LadderClaim } from './proportion/claim';
 export { alignment } from './proportion/alignment';
 export { tempoFor } from './proportion/tempo-for';
 export { resultant } from './proportion/resultant';
@@ -65,6 +66,7 @@ export { tempoMarkWords, tempoMarks, type TempoMark } from './views/tempo-marks'
 export { compareWritings, legibilityOf, legibilityWords, type Legibility, type WritingChoice } from './views/legibility';
 export { scoreOf, type Score, type Staff } from './views/score';
 export { playEvents } from './views/play-events';
+export { endWords, statementEnds, type StatementEnd } from './views/statement-ends';
 export { threadsOf, type Thread, type ThreadReading, type ThreadRow, type ThreadTick, type Threads } from './views/threads';
 
 export {

@@ -1,6 +1,6 @@
 'use client';
 
-import { describeStatement, formatFraction, readingWords } from '@/engine';
+import { describeStatement, endWords, formatFraction, readingWords, statementEnds } from '@/engine';
 import { useStudy } from './context';
 import { tint } from './family';
 
@@ -9,6 +9,8 @@ export function StatementTable() {
   const { state, selection, select } = useStudy();
   const { study, built } = state;
   const own = built.statements.filter((s) => s.section === selection.section);
+  // Only what ends inside a measure is worth a word.
+  const ends = new Map(statementEnds(study, built, state.measures).filter(({ within }) => !within.equals(1)).map((end) => [end.statement.id, endWords(end)]));
   return (
     <section aria-labelledby="statements-heading" className="mt-10 min-w-0">
       <h2 id="statements-heading" className="mb-2 text-[15px] font-semibold">
@@ -24,7 +26,10 @@ export function StatementTable() {
               className="flex w-full items-baseline gap-3 py-2 text-left hover:bg-wash aria-pressed:font-semibold"
             >
               <span aria-hidden className="inline-block h-2.5 w-2.5 shrink-0 translate-y-px" style={{ background: tint(study, statement.instrument) }} />
-              {describeStatement(state, statement)}
+              <span>
+                {describeStatement(state, statement)}
+                {ends.has(statement.id) && <span className="text-soft">{` It ${ends.get(statement.id)}.`}</span>}
+              </span>
             </button>
           </li>
         ))}

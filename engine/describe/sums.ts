@@ -1,9 +1,13 @@
 import { type Fraction, formatFraction, isFactor, sum } from '../exact/fraction';
 import { proportionFactors } from '../process/proportion';
 import { ladder } from '../proportion/ladder';
+import { rulesOf } from '../process/registry';
 import { parseMetre } from '../rhythm/metre';
-import type { Section, Study } from '../study/schema';
+import { parseRhythm } from '../rhythm/parse';
+import type { Rhythm } from '../rhythm/types';
+import type { ProcessSection, Section, Study } from '../study/schema';
 import type { BuiltStudy, Statement } from '../study/types';
+import { applySteps } from '../transform/steps';
 import { type PlannedMeasure, measureAt, metreOf, planMeasures } from '../views/measures';
 import { listWords, measureNumber, measureWord, measureWords } from './words';
 
@@ -52,7 +56,7 @@ export const sumWords = ({ terms, total }: Sum): string => (terms === '' ? total
 
 /** What does not hold in a section, in words, and the factors that would mend it. */
 export type Remark = {
-  readonly code: 'unequal-steps' | 'ends-inside';
+  readonly code: 'unequal-steps' | 'ends-inside' | 'proportions';
   readonly text: string;
   /** the statement at fault, by number, where there is one */
   readonly statement?: number;
@@ -104,15 +108,22 @@ function endRemark(study: Study, section: Section, statements: readonly Statemen
   return null;
 }
 
-/** What a composer would want to be told about a section of one statement after another. */
+/** The subject of a section as its process finds it. */
+function subjectOf(study: Study, section: ProcessSection): Rhythm {
+  const subject = study.subjects.find(({ id }) => id === section.subject);
+  return subject === undefined ? [] : applySteps(parseRhythm(subject.rhythm), section.before ?? []);
+}
+
+/** What a composer would want to be told about the proportions of a section. */
 export function sectionRemarks(study: Study, built: BuiltStudy, section: Section): Remark[] {
-  if (section.kind !== 'process' || section.process.kind !== 'proportion') return [];
+  if (section.kind !== 'process') return [];
+  const own = rulesOf(section.process).remarks?.({ process: section.process, subject: subjectOf(study, section) }) ?? [];
+  const told = own.length === 0 ? [] : [{ code: 'proportions' as const, text: own.join(' ') }];
+  if (section.process.kind !== 'proportion' || (section.process.entries ?? 'successive') !== 'successive') return told;
   const factors = proportionFactors(section.process);
   const statements = built.statements.filter((s) => s.section === section.id && s.subject !== null);
-  const isSuccessive = (section.process.entries ?? 'successive') === 'successive';
-  if (!isSuccessive) return [];
   const remarks = [stepsRemark(factors), endRemark(study, section, statements, planMeasures(study, built), factors)];
-  return remarks.filter((remark) => remark !== null);
+  return [...told, ...remarks.filter((remark) => remark !== null)];
 }
 
 /** Which sections mirror which, in words: “Filling and Emptying, Sluice and Sluice reversed mirror about Pound”. */

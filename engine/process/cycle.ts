@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { field, instrumentName, plain, readingPart, subjectParts, word } from '../describe/sentence-parts';
-import { listWords, times } from '../describe/words';
+import { listWords, plural, times } from '../describe/words';
 import { EngineError } from '../errors';
 import { ZERO, gcd } from '../exact/fraction';
 import { LIMITS } from '../limits';
@@ -52,6 +52,13 @@ export const cycle: ProcessRules<typeof schema> = {
       ),
       ZERO,
     );
+  },
+  remarks({ process, subject }) {
+    const attacks = subject.filter(({ rest }) => !rest).length;
+    if (attacks === 0) return [];
+    const colours = process.colour.length;
+    const needed = colours / Number(gcd(BigInt(attacks), BigInt(colours)));
+    return [`${plural(attacks, 'attack')} and ${plural(colours, 'colour')} end together after ${plural(needed, 'round')}, ${needed * attacks} attacks in all.`];
   },
   sentence: ({ study, section, process }) => [
     ...subjectParts(study, section),

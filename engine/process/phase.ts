@@ -4,6 +4,7 @@ import { plural, times } from '../describe/words';
 import { EngineError } from '../errors';
 import { formatFraction, sum, toFraction } from '../exact/fraction';
 import { LIMITS } from '../limits';
+import { alignment } from '../proportion/alignment';
 import { count, exactText, reading, repeats } from '../study/fields';
 import { locate } from '../study/locate';
 import { rotate } from '../transform/rotate';
@@ -53,6 +54,15 @@ export const phase: ProcessRules<typeof schema> = {
         }),
       ),
     );
+  },
+  remarks({ process, subject }) {
+    const total = sum(subject.map((value) => value.length));
+    const step = toFraction(process.pulse).mul(process.shift);
+    if (step.n === 0n || total.n === 0n) return ['Nothing is shifted: both play the same throughout.'];
+    // Together again once the shifts add up to whole subjects.
+    const together = Number(alignment([step.abs(), total]).div(step.abs()));
+    const after = `Both are together again after ${plural(together, 'shift')}`;
+    return [process.shifts < together ? `${after}; here there are ${process.shifts}.` : `${after}.`];
   },
   sentence: ({ study, section, process }) => {
     const [stays, moves] = instrumentParts(study, section.instruments.slice(0, 2)).filter(({ control }) => control !== undefined);

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { field, plain, playersParts, word } from '../describe/sentence-parts';
+import { plural } from '../describe/words';
 import { EngineError } from '../errors';
 import { ZERO, formatFraction, gcd, toFraction } from '../exact/fraction';
 import { LIMITS } from '../limits';
@@ -31,6 +32,10 @@ export const resultantProcess: ProcessRules<typeof schema> = {
     });
     const values = resultant(process.a, process.b).map((gap) => ({ length: unit.mul(gap), rest: false, origin: null }));
     return [plainStatement({ start: ZERO, instrument: instruments[0]!, subject: null, values })];
+  },
+  remarks({ process: { a, b } }) {
+    const end = (a * b) / Number(gcd(BigInt(a), BigInt(b)));
+    return [`Both pulses are together again after ${plural(end, 'unit')}, ${plural(resultant(a, b).length, 'attack')}.`];
   },
   sentence: ({ study, section, process }) => [
     plain('A pulse of '),

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { entriesWords, field, plain, playersParts, readingPart, rotationWords, subjectParts, word } from '../describe/sentence-parts';
-import { times } from '../describe/words';
-import { sum } from '../exact/fraction';
+import { plural, times } from '../describe/words';
+import { gcd, sum } from '../exact/fraction';
 import { count, entriesSchema, reading, rotateBy, turn } from '../study/fields';
 import { locate } from '../study/locate';
 import { rotate } from '../transform/rotate';
@@ -44,6 +44,13 @@ export const rotation: ProcessRules<typeof schema> = {
         values: locate({ path: `${path}.by` }, () => rotate(figure, index * process.steps, process.by)),
       }),
     );
+  },
+  remarks({ process, subject }) {
+    if (typeof process.by === 'object' || subject.length === 0) return [];
+    const size = process.by === 'values' ? subject.length : subject.filter(({ rest }) => !rest).length;
+    if (size === 0 || process.steps === 0) return [];
+    const home = size / Number(gcd(BigInt(Math.abs(process.steps)), BigInt(size)));
+    return [`It is back where it began after ${plural(home, 'statement')}.`];
   },
   sentence: ({ study, section, process }) => [
     ...subjectParts(study, section),

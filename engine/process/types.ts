@@ -61,6 +61,8 @@ export type ProcessRules<S extends z.ZodObject> = {
   size(context: ProcessContext<z.output<S>>): number;
   /** statements in order of number */
   statements(context: ProcessContext<z.output<S>>): Placed[];
+  /** what a composer would want to be told of its proportions, in whole sentences */
+  remarks?(context: { readonly process: z.output<S>; readonly subject: readonly Value[] }): string[];
   /** the process sentence, its words the controls */
   sentence(context: SentenceContext<z.output<S>>): SentencePart[];
 };

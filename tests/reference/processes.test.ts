@@ -136,6 +136,18 @@ describe('resultant (Schillinger, The Schillinger System of Musical Composition,
   });
 });
 
+describe('where cycles come together again', () => {
+  it.each<[string, Process, string, string]>([
+    ['the twelve-pulse clapping pattern after twelve shifts (Haack, 1991)', { kind: 'phase', pulse: '1/8', shift: 1, repeatsPerShift: 1, shifts: 12 }, '1/8 1/8 1/8 (1/8) 1/8 1/8 (1/8) 1/8 (1/8) 1/8 1/8 (1/8)', 'Both are together again after 12 shifts.'],
+    ['in steps of five pulses of twelve too, since they have no common divisor', { kind: 'phase', pulse: '1/8', shift: -5, repeatsPerShift: 1, shifts: 4 }, '1/2 1/2 1/2', 'Both are together again after 12 shifts; here there are 4.'],
+    ['Machaut, M4: colour 18, talea 12 (bestmusicteacher.com)', { kind: 'cycle', colour: Array.from({ length: 18 }, () => 'one'), until: 1 }, Array.from({ length: 12 }, () => '1/4').join(' '), '12 attacks and 18 colours end together after 3 rounds, 36 attacks in all.'],
+    ['3 against 2 (Schillinger, 1946)', { kind: 'resultant', a: 3, b: 2, unit: '1/8' }, '1/4', 'Both pulses are together again after 6 units, 4 attacks.'],
+    ['a rotation by two of five values', { kind: 'rotation', steps: 2, by: 'values', count: 2 }, '1/8 1/8 1/4 1/4 1/4', 'It is back where it began after 5 statements.'],
+  ])('%s', (_, process, rhythm, remark) => {
+    expect(describeSection(document(process, rhythm), 'a')).toContain(remark);
+  });
+});
+
 describe('each process in a sentence', () => {
   it.each<[Process, string[] | undefined, string]>([
     [{ kind: 'rotation', steps: 1, by: { pulse: '1/8' }, count: 3 }, undefined, 'The subject is rotated by 1 pulse of 1/8 from each statement to the next, stated 3 times, one after another, forwards, by one and two.'],

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
-  EngineError, type Exact, Fraction, LIMITS, alignment, euclidean, formatFraction, ladder, resultant, secondsOf, tempoFor,
+  EngineError, type Exact, Fraction, LIMITS, alignment, checkLadder, claimWords, euclidean, formatFraction, ladder, resultant, secondsOf, tempoFor,
 } from '@/engine';
 import { arbitraryFactor, arbitraryLength } from '../rhythm/arbitrary-rhythm';
 
@@ -141,5 +141,26 @@ describe('resultant and euclidean refuse', () => {
     expect(euclidean(1, 1)).toEqual([1]);
     expect(euclidean(1, 2)).toEqual([2]);
     expect(euclidean(4, 4)).toEqual([1, 1, 1, 1]);
+  });
+});
+
+describe('a claim about a run of lengths', () => {
+  it('“each 50 % longer”: 4, 6, 8, 12 are steps of 3:2, 4:3, 3:2, and so fail at the second (common practice, no source)', () => {
+    const claim = checkLadder(['4', '6', '8', '12'], '150%');
+    expect(claim.holds).toBe(false);
+    expect(claim.failure && [claim.failure.step, formatFraction(claim.failure.ratio), formatFraction(claim.failure.expected), formatFraction(claim.failure.given)]).toEqual([1, '4/3', '9', '8']);
+    expect(claimWords(claim)).toBe('The claim fails at step 2: length 3 is 8, 4/3 of the one before it; it would be 9. 4, 6, 9, 13 1/2 would satisfy it.');
+  });
+  it('4, 6, 9, 13 1/2 satisfies it', () => {
+    expect(checkLadder(['4', '6', '9', '13 1/2'], '3/2')).toMatchObject({ holds: true });
+    expect(claimWords(checkLadder(['4', '6', '9', '13 1/2'], '3/2'))).toBe('The claim holds: every step is the same.');
+  });
+  it('law: the run that would satisfy a claim does', () => {
+    fc.assert(
+      fc.property(fc.array(fc.integer({ min: 1, max: 99 }), { minLength: 1, maxLength: 8 }), fc.integer({ min: 1, max: 9 }), fc.integer({ min: 1, max: 9 }), (lengths, n, d) => {
+        const { run } = checkLadder(lengths, `${n}/${d}`);
+        expect(checkLadder(run, `${n}/${d}`).holds).toBe(true);
+      }),
+    );
   });
 });
