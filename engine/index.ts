@@ -90,3 +90,6 @@ export { goldenSection } from './subjects/golden-section';
 export { CATALOGUE } from './subjects/catalogue/catalogue';
 export { searchCatalogue, type CatalogueQuery } from './subjects/catalogue/search-catalogue';
 export type { CatalogueEntry, CatalogueFamily } from './subjects/catalogue/figure';
+
+export { findTransformations, type Transformation } from './find/find-transformations';
+export { nearestTransformation, type FittingStretch, type NearestTransformation } from './find/nearest-transformation';
