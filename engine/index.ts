@@ -93,3 +93,6 @@ export type { CatalogueEntry, CatalogueFamily } from './subjects/catalogue/figur
 
 export { findTransformations, type Transformation } from './find/find-transformations';
 export { nearestTransformation, type FittingStretch, type NearestTransformation } from './find/nearest-transformation';
+
+export { checkAnswer } from './check/check-answer';
+export { MISTAKES, type CheckInput, type CheckedAnswer, type CheckedValue, type Diagnosis, type Mistake, type MistakeAt, type Verdict } from './check/types';

@@ -1,0 +1,32 @@
+import type { Mistake } from './types';
+
+/** What is wrong, and the habit that avoids it; sentences of our own for a teacher's use (common practice, no source). */
+export const HABITS: Readonly<Record<Mistake, readonly [wrong: string, habit: string]>> = {
+  'nothing-done': ['This is the subject itself', 'Read the question again, and say to yourself what is to be done, before writing.'],
+  'factor-inverted': ['The factor is upside down', 'Before writing, ask whether the answer must be longer or shorter than the subject.'],
+  'rests-not-stretched': ['The attacks are stretched, the rests are not', 'Treat a rest as a value like any other: multiply every symbol, silent ones too.'],
+  'only-rests-stretched': ['Only the rests are stretched', 'Multiply every symbol, those that sound first.'],
+  'not-stretched': ['The values are not stretched', 'Check the total: it must be the factor times that of the subject.'],
+  'not-reversed': ['The order is not reversed', 'Write the last value of the subject first.'],
+  'reversed-by-attacks': ['The attacks are reversed, not the values', 'To reverse values, copy the lengths from the last to the first and leave each as it is.'],
+  'reversed-by-values': ['The values are reversed, not the attacks', 'To reverse attacks, write down the gaps between attacks, and read those backwards.'],
+  'rotated-the-wrong-way': ['It is rotated the other way', 'Move the first values to the end: the answer begins later in the subject.'],
+  'rotated-too-far': ['It is rotated one too far', 'Count the values that move, not the one that you begin with.'],
+  'rotated-too-little': ['It is rotated one too little', 'Count the values that move, not the one that you begin with.'],
+  'not-rotated': ['It is not rotated', 'Mark in the subject where the answer begins.'],
+  'rotated-by-attacks': ['It is rotated by attacks, not by values', 'When values are counted, a rest counts as one too.'],
+  'rotated-by-values': ['It is rotated by values', 'When attacks or pulses are counted, rests travel with the attack before them.'],
+  'taken-away-instead': ['The amount is taken the other way', 'Ask whether each attack must become longer or shorter.'],
+  'added-to-rests': ['The amount is added to the rests too', 'Only what sounds takes an added value.'],
+  'not-added': ['The amount is not added', 'Compare one value with that of the subject.'],
+  'steps-in-another-order': ['The steps are taken in another order', 'Write down the result of each step before taking the next.'],
+  'wrong-factor': ['Everything is stretched, but by another factor', 'Check the first value and the total against the factor.'],
+  'other-unit': ['It is right in another unit', 'Compare the first value with the subject’s, and keep its unit.'],
+  'measure-does-not-add-up': ['A measure does not add up', 'Count each measure through before drawing its bar line.'],
+  'struck-again': ['A value that is held on is struck again', 'Where a value goes on, tie it: one attack, whatever it takes to write it.'],
+  'held-on': ['Values that are struck are held as one', 'Count the attacks of the answer: there are as many as in the key.'],
+  'kind-wrong': ['A rest stands for an attack, or an attack for a rest', 'Mark the rests of the subject before you begin.'],
+  'value-wrong': ['One value is wrong', 'Check each value against the one that it comes from.'],
+  'value-missing': ['A value is missing', 'Count the values: there are as many as in the subject.'],
+  'value-added': ['A value is too many', 'Count the values: there are as many as in the subject.'],
+};
