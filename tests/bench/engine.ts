@@ -3,19 +3,15 @@ import {
   augment, buildStudy, parseRhythm, parseStudy, spellLine,
 } from '@/engine';
 import { type Sized, medianOf, report } from './measure';
-import { placePlain } from './plain-numbers';
+import { METRE, doubles, placePlain } from './plain-numbers';
 
 const SIZES = [1_000, 10_000, 100_000];
 const FACTORS = ['1', '5/4', '3/2', '2'];
 const SUBJECT = '3/8 1/8 1/4 (1/4) 1/8 1/8 1/4 3/8 1/8 1/2 (1/4) 1/4 1/4 1/4 1/2';
 const INSTRUMENTS = ['crotales', 'temple-blocks', 'log-drum', 'tam-tam'];
-const METRE = 1;
 
 const subject = parseRhythm(SUBJECT);
 const attacksIn = (rhythm: Rhythm): number => rhythm.filter(({ rest }) => !rest).length;
-
-/** Doubles of a rhythm, rests negative: made before the clock runs, as the rhythm itself is. */
-const doubles = (rhythm: Rhythm): Float64Array => Float64Array.from(rhythm, ({ length, rest }) => (rest ? -1 : 1) * length.valueOf());
 
 /** The subject again and again, its factor cycling: spelled measures recur. */
 function recurring(attacks: number): Rhythm {

@@ -1,3 +1,11 @@
+import type { Rhythm } from '../../engine';
+
+/** A measure of 4/4, in whole notes. */
+export const METRE = 1;
+
+/** A rhythm as doubles: whole notes, negative for rests. */
+export const doubles = (rhythm: Rhythm): Float64Array => Float64Array.from(rhythm, ({ length, rest }) => (rest ? -1 : 1) * length.valueOf());
+
 /** One attack in its measure: the measure's own beat position and the length that is left in it, in doubles. */
 export type PlainAttack = { position: number; length: number; value: number };
 
