@@ -17,6 +17,11 @@ export { applySteps, type Step } from './transform/steps';
 export { ladder, type Ladder } from './proportion/ladder';
 export { checkLadder, claimWords, type LadderClaim } from './proportion/claim';
 export { alignment } from './proportion/alignment';
+export { canonEntries, type CanonVoice } from './proportion/canon-entries';
+export { cyclesOf, type Cycles } from './proportion/cycles';
+export { divide, fibonacci, roundParts, type RoundedPart } from './proportion/divide';
+export { proportionName, proportionOf, type NamedProportion, type ProportionGenus } from './proportion/named';
+export { pivotFor, tempoChain, type ChainedTempo, type Pivot } from './proportion/tempo-chain';
 export { tempoFor } from './proportion/tempo-for';
 export { resultant } from './proportion/resultant';
 export { euclidean } from './proportion/euclidean';
@@ -38,6 +43,7 @@ export {
   type StudyInput,
 } from './study/schema';
 export { buildStudy } from './study/build';
+export { stepsSchema } from './study/fields';
 export type { LineSource } from './study/line';
 export { proportionFactors } from './process/proportion';
 export { PROCESSES, processChoices, rulesOf, type ProcessKind } from './process/registry';
@@ -81,7 +87,7 @@ export {
 export { sectionSentence } from './describe/sentence';
 export { readingWords, rotationWords, stepWords, type FieldControl, type FieldInput, type SentenceControl, type SentencePart } from './describe/sentence-parts';
 export { mirrorWords, sectionRemarks, sectionSum, studyMetres, studySum, sumWords, type Remark, type Sum } from './describe/sums';
-export { inSentence, measureNumber, measureWords, valueName, type DescribeOptions, type ValueNames } from './describe/words';
+export { inSentence, listWords, measureNumber, measureWords, valueName, type DescribeOptions, type ValueNames } from './describe/words';
 
 export { countSubjects, generateSubject } from './subjects/generate';
 export { NoSubjectError, type GeneratedSubject, type SubjectConstraint, type SubjectConstraints } from './subjects/types';

@@ -1,40 +1,10 @@
 'use client';
 
 import { useId, useMemo } from 'react';
-import { EngineError, type Metre, RhythmTextError, parseRhythm } from '@/engine';
+import type { Metre } from '@/engine';
+import { Marked, faultOf } from './rhythm-fault';
 import { RhythmStaff } from './rhythm-staff';
 import { useStudy } from './context';
-
-/** What is wrong with a text: the sentence, and the piece that it marks. */
-type Fault = { readonly message: string; readonly offset: number; readonly length: number };
-
-function faultOf(text: string, metre: Metre): Fault | null {
-  try {
-    parseRhythm(text, { metre });
-    return null;
-  } catch (error) {
-    if (error instanceof RhythmTextError) return { message: error.message, offset: error.offset, length: error.length };
-    if (error instanceof EngineError) return { message: error.message, offset: 0, length: text.length };
-    throw error;
-  }
-}
-
-/** The text with the offending piece marked. */
-function Marked({ text, fault }: { text: string; fault: Fault }) {
-  const from = Math.max(0, fault.offset - 24);
-  const to = Math.min(text.length, fault.offset + fault.length + 24);
-  const end = Math.min(fault.offset + fault.length, fault.offset + 80);
-  return (
-    <code aria-hidden className="mb-1 block overflow-x-auto whitespace-pre font-mono text-[13px]">
-      {from > 0 && '… '}
-      {text.slice(from, fault.offset).replace(/\s+/g, ' ')}
-      <mark className="bg-transparent font-bold text-mark underline decoration-wavy underline-offset-4">
-        {text.slice(fault.offset, end) || '␣'}
-      </mark>
-      {text.slice(end, to).replace(/\s+/g, ' ')}
-    </code>
-  );
-}
 
 /**
  * Rhythm text with its staff, drawn as one types. A text that cannot be read stays in the field, is marked at its place,
@@ -100,7 +70,7 @@ export function RhythmField({
           <span className="text-soft"> The study stays as it was until this can be read.</span>
         </div>
       )}
-      <RhythmStaff text={fault === null ? text : value} metre={metre} {...(instrument ? { instrument } : {})} />
+      <RhythmStaff text={fault === null ? text : value} metre={metre} sounds={state.study.instruments.find((one) => one.id === instrument)?.sounds} />
     </div>
   );
 }

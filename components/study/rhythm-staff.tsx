@@ -4,7 +4,6 @@ import { useMemo } from 'react';
 import { EngineError, Fraction, type Metre, parseMetre, parseRhythm, spellLine } from '@/engine';
 import { ScoreLines } from '../score/score-lines';
 import type { DrawnScore } from '../score/spec';
-import { useStudy } from './context';
 
 const ONE = new Fraction(1);
 
@@ -46,9 +45,7 @@ function spell(text: string, metre: Metre, sounds: number | undefined): Spelled 
 }
 
 /** A rhythm text as one staff. Nothing is drawn where it cannot be read; where it cannot be written, the reason is. */
-export function RhythmStaff({ text, metre, instrument }: { text: string; metre: Metre; instrument?: string }) {
-  const { state } = useStudy();
-  const sounds = state.study.instruments.find(({ id }) => id === instrument)?.sounds;
+export function RhythmStaff({ text, metre, sounds }: { text: string; metre: Metre; sounds?: number | undefined }) {
   const spelled = useMemo(() => spell(text, metre, sounds), [text, metre, sounds]);
   if (spelled === null) return null;
   if ('error' in spelled) return <p className="mt-2 text-[14px] text-mark">{spelled.error}</p>;

@@ -31,3 +31,5 @@ export const stepSchema = z.discriminatedUnion('kind', [
   z.strictObject({ kind: z.literal('rotate'), steps: turn, by: rotateBy }),
   z.strictObject({ kind: z.literal('add'), amount: exactText }),
 ]);
+/** A chain of transformations. */
+export const stepsSchema = z.array(stepSchema).max(LIMITS.steps);

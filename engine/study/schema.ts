@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { EngineError } from '../errors';
 import { LIMITS } from '../limits';
 import { PROCESSES } from '../process/registry';
-import { exactText, id, metreText, name, rhythmText, stepSchema, tempoSchema } from './fields';
+import { exactText, id, metreText, name, rhythmText, stepsSchema, tempoSchema } from './fields';
 
 /** Every process of the registry, told apart by its kind. */
 const schemas = Object.values(PROCESSES).map(({ schema }) => schema);
@@ -27,7 +27,7 @@ const processSectionSchema = z.strictObject({
   subject: id.optional(),
   process: processSchema,
   instruments: z.array(id).max(LIMITS.instruments),
-  before: z.array(stepSchema).max(LIMITS.steps).optional(),
+  before: stepsSchema.optional(),
 });
 const freeSectionSchema = z.strictObject({
   ...sectionCommon,
