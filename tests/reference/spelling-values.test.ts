@@ -58,6 +58,9 @@ describe('tuplets (11.7): the plain number is the ratio to the next lower normal
     ['6/8', '3/16 3/16 3/8', '2:3{e e} q.'],
     ['6/8', many('3/32', 4, '3/8'), '4:3{e e e e} q.'],
     ['6/8', many('3/40', 5, '3/8'), '5:3{e e e e e} q.'],
+    // in the long group of an additive metre too, and in no short one
+    ['3+2/8', '3/16 3/16 1/4', '2:3{e e} q'],
+    ['2+2+3/8', '1/4 1/4 3/16 3/16', 'q q 2:3{e e}'],
     // what keeps the beat in three is no quadruplet
     ['6/8', '3/16 1/16 1/8 3/8', 'e. s e q.'],
   ])('%s: %s', (metre, rhythm, written) => expect(spelled(rhythm, metre)).toBe(written));

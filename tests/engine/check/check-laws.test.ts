@@ -4,6 +4,7 @@ import {
   Fraction, type Mistake, type Rhythm, type Step, type Value,
   applySteps, augment, checkAnswer, formatFraction, formatRhythm, retrograde, rotate,
 } from '@/engine';
+import { align } from '@/engine/check/align';
 import { arbitraryFactor, arbitraryRhythm } from '../rhythm/arbitrary-rhythm';
 
 const subject = arbitraryRhythm.filter((rhythm) => rhythm.length >= 3 && rhythm.length <= 14 && rhythm.some(({ rest }) => !rest)).map((rhythm) => rhythm.map(({ length, rest }) => ({ length, rest })));
@@ -94,6 +95,43 @@ describe('laws of the checker', () => {
         expect(wrong.map(({ verdict }) => verdict)).toEqual([{ 'value-missing': 'missing', 'value-added': 'extra', 'value-wrong': 'wrong-length' }[slip]]);
       }),
       runs,
+    );
+  });
+
+  it('the fewest slips, as found by trying every way', () => {
+    /** Fewest slips between two short lists, each a change, a value left out or put in, struck apart or held together. */
+    const fewest = (key: Rhythm, answer: Rhythm): number => {
+      const known = new Map<string, number>();
+      const from = (i: number, j: number): number => {
+        if (i === key.length && j === answer.length) return 0;
+        const place = `${i} ${j}`;
+        const before = known.get(place);
+        if (before !== undefined) return before;
+        const ways: number[] = [];
+        if (i < key.length) ways.push(11 + from(i + 1, j));
+        if (j < answer.length) ways.push(11 + from(i, j + 1));
+        if (i < key.length && j < answer.length) {
+          const [a, b] = [key[i]!, answer[j]!];
+          const same = a.rest === b.rest && a.length.equals(b.length);
+          ways.push((same ? 0 : a.rest === b.rest || a.length.equals(b.length) ? 10 : 14) + from(i + 1, j + 1));
+          for (let count = 2; count <= 4; count += 1) {
+            const sums = (whole: Value, parts: Rhythm) => !whole.rest && parts.length === count && parts.every(({ rest }) => !rest) && parts.reduce((sum, { length }) => sum.add(length), new Fraction(0)).equals(whole.length);
+            if (sums(a, answer.slice(j, j + count))) ways.push(10 + from(i + 1, j + count));
+            if (sums(b, key.slice(i, i + count))) ways.push(10 + from(i + count, j + 1));
+          }
+        }
+        const least = Math.min(...ways);
+        known.set(place, least);
+        return least;
+      };
+      return from(0, 0);
+    };
+    const short = fc.array(fc.tuple(fc.constantFrom(1, 1, 2, 3, 4), fc.boolean()).map(([n, rest]): Value => ({ length: new Fraction(n, 8), rest: rest && n === 1 })), { maxLength: 40 });
+    fc.assert(
+      fc.property(short, short, (key, answer) => {
+        expect(align(key, answer).cost).toBe(fewest(key, answer));
+      }),
+      { numRuns: 400 },
     );
   });
 

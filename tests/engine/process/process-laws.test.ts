@@ -71,6 +71,8 @@ describe('laws of every process', () => {
         const back = built.statements.filter((s) => s.section === 'm');
         expect(back.map((s) => formatRhythm(s.rhythm)).sort()).toEqual(own.map((s) => formatRhythm(retrograde(s.rhythm, 'values'))).sort());
         expect(built.palindrome.values).toEqual({ holds: true });
+        expect(new Set(own.map((s) => s.mirrored))).toEqual(new Set(own.length > 0 ? [false] : []));
+        expect(new Set(back.map((s) => s.mirrored))).toEqual(new Set(back.length > 0 ? [true] : []));
       }),
       runs,
     );
