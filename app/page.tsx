@@ -18,6 +18,7 @@ export default async function HomePage() {
       <header className="flex px-5 py-5 sm:px-14">
         <nav aria-label="Main" className="ml-auto flex flex-wrap gap-x-6 gap-y-1 text-[15px] text-soft">
           <Link href="/studies">Studies</Link>
+          <Link href="/proportions">Proportions</Link>
           <Link href="/check">Check</Link>
           <ThemeSwitch initial={theme} />
           <PersonLinks person={person} />

@@ -10,7 +10,7 @@ import { Wordmark } from './ui/wordmark';
 /** The line at the top of every page but the first. */
 export function SiteHeader({ theme, person, status }: { theme: Theme; person: Person; status?: ReactNode }) {
   const here = usePathname();
-  const places = [['/studies', 'Studies'], ['/check', 'Check'], ...(person?.role === 'administrator' ? [['/people', 'People']] : [])] as [string, string][];
+  const places = [['/studies', 'Studies'], ['/proportions', 'Proportions'], ['/check', 'Check'], ...(person?.role === 'administrator' ? [['/people', 'People']] : [])] as [string, string][];
   return (
     <header className="flex flex-wrap items-baseline gap-x-8 gap-y-2 border-b border-hair px-5 pb-3.5 pt-4 text-[14.5px] sm:px-8 lg:px-12">
       <Link href="/" className="mr-2">
