@@ -1,5 +1,6 @@
 'use client';
 
+import Link from 'next/link';
 import { useState } from 'react';
 import { PageHeading } from '../ui/page-heading';
 import { Segments } from '../ui/segments';
@@ -21,6 +22,12 @@ export function CheckPage({ initial }: { initial: CheckAddress }) {
         <Segments label="Question" value={mode} options={[['check', 'Is this right?'], ['find', 'What was done to it?']]} onChange={(next) => set({ mode: next })} />
       </PageHeading>
       {mode === 'check' ? <AnswerCheck state={state} set={set} /> : <WhatWasDone from={from} to={to} metre={metre} set={set} />}
+      <p className="mt-10 text-[13.5px] text-soft">
+        The same for programs:{' '}
+        <Link href="/open-api" className="underline underline-offset-[3px]">
+          open API
+        </Link>
+      </p>
     </main>
   );
 }

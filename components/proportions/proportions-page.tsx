@@ -1,5 +1,6 @@
 'use client';
 
+import Link from 'next/link';
 import { useState } from 'react';
 import { PageHeading } from '../ui/page-heading';
 import { useAddress } from '../ui/use-address';
@@ -47,6 +48,12 @@ export function ProportionsPage({ initial, usual }: { initial: ProportionsAddres
         <DivisionCalculator whole={whole} way={way} shares={shares} unit={unit} set={set} />
         <CanonCalculator subject={subject} speeds={speeds} meet={meet} set={set} />
       </div>
+      <p className="mt-10 text-[13.5px] text-soft">
+        The same for programs:{' '}
+        <Link href="/open-api" className="underline underline-offset-[3px]">
+          open API
+        </Link>
+      </p>
     </main>
   );
 }

@@ -14,7 +14,7 @@ export type Access = {
   readonly body?: number;
 };
 
-const { small, document } = BODY_BYTES;
+const { small, document, open } = BODY_BYTES;
 
 /**
  * Who may what: every handler, and what guards it. A handler without a row does not compile; a row or a handler without
@@ -24,6 +24,12 @@ const { small, document } = BODY_BYTES;
 export const ACCESS = {
   'GET /api/health': { who: 'anybody', rows: 'none' },
   'POST /api/register': { who: 'anybody', rows: 'none', rate: 'register', body: small },
+
+  'GET /api/openapi.json': { who: 'anybody', rows: 'none' },
+  'POST /api/transform': { who: 'anybody', rows: 'none', rate: 'open', body: open },
+  'POST /api/check': { who: 'anybody', rows: 'none', rate: 'open', body: open },
+  'POST /api/find': { who: 'anybody', rows: 'none', rate: 'open', body: open },
+  'POST /api/proportions/[calculator]': { who: 'anybody', rows: 'none', rate: 'open', body: open },
 
   'GET /api/account': { who: 'signed-in', rows: 'own' },
   'PATCH /api/account': { who: 'signed-in', rows: 'own', rate: 'change', body: small },

@@ -1,5 +1,5 @@
 import 'server-only';
-import { ZodError } from 'zod';
+import { type z, ZodError } from 'zod';
 import { EngineError } from '@/engine';
 import { AppError, ERROR_STATUS } from '../errors';
 import type { ErrorResponse } from '../schemas/error';
@@ -23,6 +23,24 @@ function answer(status: number, error: ErrorResponse['error']): Response {
   return Response.json({ error } satisfies ErrorResponse, { status, headers: { 'cache-control': 'no-store' } });
 }
 
+const SENTENCE = /^[\p{Lu}“].*[.?]$/su;
+const where = (path: readonly PropertyKey[]): string => (path.length === 0 ? 'The body' : `“${path.map(String).join('.')}”`);
+
+/** What a schema refuses, in a sentence: its own where it has one. */
+function sentenceOf(issue: z.core.$ZodIssue): string {
+  if (SENTENCE.test(issue.message)) return issue.message;
+  switch (issue.code) {
+    case 'unrecognized_keys':
+      return `${issue.keys.map((key) => `“${key.slice(0, 60)}”`).join(', ')} is not known here.`;
+    case 'too_big':
+      return `There is too much in ${where(issue.path)}: ${String(issue.maximum)} is the limit.`;
+    case 'too_small':
+      return `${where(issue.path)} is too short or too small: ${String(issue.minimum)} is the least.`;
+    default:
+      return `${where(issue.path)} is missing, or is not what is expected there.`;
+  }
+}
+
 /** The answer for anything that a handler throws. What is not a refusal is logged and told as a fault of ours. */
 export function errorResponse(error: unknown): Response {
   if (error instanceof AppError) {
@@ -34,8 +52,8 @@ export function errorResponse(error: unknown): Response {
     return answer(422, { code, message, ...(path && { fields: { [path]: message } }) });
   }
   if (error instanceof ZodError) {
-    const fields = Object.fromEntries(error.issues.map((issue) => [issue.path.map(String).join('.'), issue.message]));
-    return answer(422, { code: 'invalid', message: error.issues[0]?.message ?? 'This cannot be accepted as it is.', fields });
+    const fields = Object.fromEntries(error.issues.map((issue) => [issue.path.map(String).join('.'), sentenceOf(issue)]));
+    return answer(422, { code: 'invalid', message: error.issues[0] ? sentenceOf(error.issues[0]) : 'This cannot be accepted as it is.', fields });
   }
   if (error instanceof SyntaxError) {
     return answer(400, { code: 'unreadable', message: 'The request could not be read: it is not JSON.' });

@@ -9,12 +9,20 @@ import 'server-only';
 export const BODY_BYTES = {
   /** anything but a study */
   small: 16 * 1024,
+  /** a question of the open API: two rhythms and a chain */
+  open: 64 * 1024,
   /** a study document and what travels with it */
   document: 2 * 1024 * 1024,
 } as const;
 
 const SECOND = 1_000;
 const MINUTE = 60 * SECOND;
+
+/** Questions a minute to the open API from one address or account. */
+function openRate(): number {
+  const asked = Number(process.env.SESQUI_OPEN_RATE ?? '');
+  return Number.isInteger(asked) && asked > 0 ? asked : 120;
+}
 
 /**
  * How often something may be done in a stretch of time, in milliseconds. Counted for the account, or where nobody is signed
@@ -27,6 +35,8 @@ export const RATES = {
   create: { most: 60, within: MINUTE },
   /** any other change */
   change: { most: 120, within: MINUTE },
+  /** questions to the open API; `SESQUI_OPEN_RATE` sets another number a minute */
+  open: { most: openRate(), within: MINUTE },
   /** accounts made from one address */
   register: { most: 10, within: 60 * MINUTE },
   /** tries at one's present password, when changing it */

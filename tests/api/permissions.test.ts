@@ -2,6 +2,7 @@ import type pg from 'pg';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Database } from '@/db/connect';
 import { hashPassword } from '@/db/password';
+import { OPEN_ROUTES } from '@/lib/schemas/open';
 import { ACCESS, type Route } from '@/lib/server/access';
 import type { Method } from '../helpers/api';
 import { CALLERS, newScene, type Caller, type Scene, type Statuses } from '../helpers/callers';
@@ -38,6 +39,14 @@ const password = () => ({ current: PASSWORD, next: `${PASSWORD}-2` });
 /** Statuses for nobody, student, teacher, composer, administrator, the owner, a stranger who has a study too. */
 const EXPECTED: Record<Route, readonly Case[]> = {
   'GET /api/health': [{ of: 'the application', statuses: [200, 200, 200, 200, 200, 200, 200] }],
+  'GET /api/openapi.json': [{ of: 'the open API', statuses: [200, 200, 200, 200, 200, 200, 200] }],
+  'POST /api/transform': [{ of: 'nobody’s rows', statuses: [200, 200, 200, 200, 200, 200, 200], body: () => OPEN_ROUTES.transform.example }],
+  'POST /api/check': [{ of: 'nobody’s rows', statuses: [200, 200, 200, 200, 200, 200, 200], body: () => OPEN_ROUTES.check.example }],
+  'POST /api/find': [{ of: 'nobody’s rows', statuses: [200, 200, 200, 200, 200, 200, 200], body: () => OPEN_ROUTES.find.example }],
+  'POST /api/proportions/[calculator]': [
+    { of: 'nobody’s rows', statuses: [200, 200, 200, 200, 200, 200, 200], at: () => 'lengths', body: () => OPEN_ROUTES.lengths.example },
+    { of: 'what is no calculator', statuses: [404, 404, 404, 404, 404, 404, 404], at: () => 'toString', body: () => ({}) },
+  ],
   'POST /api/register': [{ of: 'a new account', statuses: [201, 201, 201, 201, 201, 201, 201], body: another }],
 
   'GET /api/account': [{ of: 'one’s own', statuses: [401, 200, 200, 200, 200, 200, 200] }],
@@ -119,7 +128,7 @@ async function attempt(route: Route, { at, query = '', body, needsPassword }: Ca
   const { owner, callerId, reader } = scene;
   const before = { owner: await rowsOf(pool, owner.id), caller: callerId && (await rowsOf(pool, callerId)) };
   const [method, pattern = ''] = route.split(' ');
-  const path = pattern.replace('[id]', at?.(scene) ?? '').replace('[version]', '1');
+  const path = pattern.replace(/\[(?:id|calculator)\]/, at?.(scene) ?? '').replace('[version]', '1');
   const answer = await reader.send(method as Method, path + query, method === 'GET' ? undefined : body?.());
   const after = { owner: await rowsOf(pool, owner.id), caller: callerId && (await rowsOf(pool, callerId)) };
   const isChanged = (of: 'owner' | 'caller') => JSON.stringify(before[of]) !== JSON.stringify(after[of]);

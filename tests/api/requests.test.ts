@@ -2,6 +2,7 @@ import type pg from 'pg';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Database } from '@/db/connect';
 import { writeCursor } from '@/db/cursor';
+import { OPEN_ROUTES } from '@/lib/schemas/open';
 import { ACCESS } from '@/lib/server/access';
 import { BODY_BYTES, RATES } from '@/lib/server/limits';
 import { Reader, type Method } from '../helpers/api';
@@ -35,6 +36,11 @@ const CHANGES: readonly (readonly [Method, (of: { study: string; other: string }
   ['POST', ({ study }) => `/api/studies/${study}/copy`, () => ({})],
   ['DELETE', ({ study }) => `/api/studies/${study}`, () => ({})],
   ['POST', ({ study }) => `/api/studies/${study}/restore`, () => ({})],
+  // these change nothing, and are kept to the same rule
+  ['POST', () => '/api/transform', () => OPEN_ROUTES.transform.example],
+  ['POST', () => '/api/check', () => OPEN_ROUTES.check.example],
+  ['POST', () => '/api/find', () => OPEN_ROUTES.find.example],
+  ['POST', () => '/api/proportions/canon', () => OPEN_ROUTES.canon.example],
 ];
 
 const form = 'application/x-www-form-urlencoded';
@@ -52,7 +58,7 @@ const FORGED: readonly (readonly [string, Record<string, string>, number, string
 
 describe('a request that another site could make a browser send', () => {
   it('is tried on every route that changes anything', () => {
-    const pattern = (path: string) => path.replace(/(?<=studies\/)[^/]+|(?<=people\/)[^/]+/, '[id]');
+    const pattern = (path: string) => path.replace(/(?<=studies\/)[^/]+|(?<=people\/)[^/]+/, '[id]').replace(/(?<=proportions\/)[^/]+/, '[calculator]');
     const tried = CHANGES.map(([method, path]) => `${method} ${pattern(path({ study: 'x', other: 'x' }))}`);
     expect(tried.sort()).toEqual(Object.keys(ACCESS).filter((route) => !route.startsWith('GET')).sort());
   });

@@ -21,7 +21,7 @@ async function violations(page: Page): Promise<string[]> {
 for (const scheme of ['light', 'dark'] as const) {
   test(`no violation that can be found by machine, ${scheme}`, async ({ page }) => {
     await page.emulateMedia({ colorScheme: scheme, reducedMotion: 'reduce' });
-    for (const path of ['/', '/studies', '/sign-in', '/register', '/proportions', '/check', '/check?mode=find']) {
+    for (const path of ['/', '/studies', '/sign-in', '/register', '/proportions', '/check', '/check?mode=find', '/open-api']) {
       await page.goto(path);
       await page.waitForLoadState('networkidle');
       expect(await violations(page), path).toEqual([]);

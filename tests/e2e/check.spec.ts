@@ -118,3 +118,17 @@ test('what was done to it: found exactly, or explained as near as can be', async
   await page.getByRole('radio', { name: 'Is this right?' }).check();
   await expect(page.getByRole('heading', { level: 1 })).toHaveText('Check a worked transformation');
 });
+
+test('the open API: every example runs on its page', async ({ page }) => {
+  await page.goto('/open-api');
+  const asks = page.getByRole('button', { name: 'Ask' });
+  const count = await asks.count();
+  expect(count).toBe(9);
+  for (let index = 0; index < count; index += 1) {
+    await asks.nth(index).click();
+    await expect(page.getByLabel('Answer')).toHaveCount(index + 1);
+  }
+  await page.getByRole('textbox', { name: 'Body' }).first().fill('{');
+  await asks.first().click();
+  await expect(page.getByText('This is no JSON.')).toBeVisible();
+});

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
-  EngineError, Fraction, type StudyInput, buildStudy, describeContext, describeSection, describeStatement, describeStudy, parseStudy, sectionRemarks, toFactor, toFraction,
+  EngineError, Fraction, type StudyInput, buildStudy, describeContext, describeSection, describeStatement, describeStudy, mirrorWords, parseStudy, sectionRemarks, toFactor, toFraction,
 } from '@/engine';
 import { arbitraryFactor, arbitraryLength } from '../rhythm/arbitrary-rhythm';
 import { free, mirror, stating, study } from '../study/make-study';
@@ -166,6 +166,20 @@ describe('describeStatement', () => {
       'Statement 1 of 2, block: at 2 times its length, backwards by values, then mirrored, rotated by 1 value, 3 attacks, 2 measures long, measures 4 to 5, from 0′12″ to 0′20″.',
       'Statement 2 of 2, bell: at its own length, forwards, then mirrored, 3 attacks, 1 measure long, measure 6, from 0′20″ to 0′24″.',
     ]);
+  });
+});
+
+describe('mirrorWords', () => {
+  it('names every pair from outside in, and what they mirror about', () => {
+    const lines = [{ instrument: 'pot', rhythm: '1/2 1/2' }];
+    const words = (sections: StudyInput['sections']) => {
+      const document = parseStudy(study(sections));
+      return mirrorWords(document, buildStudy(document));
+    };
+    const [a, b, c] = [stating({ factors: ['1'] }), free('b', lines), free('c', lines)];
+    expect(words([a, b, c, mirror('d', 'b'), mirror('e', 'a')])).toBe('A with E and B with D mirror about C');
+    expect(words([a, mirror('e', 'a')])).toBe('A with E mirrors about the middle');
+    expect(words([a, b])).toBeNull();
   });
 });
 

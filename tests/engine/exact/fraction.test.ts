@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { EngineError, Fraction, augment, formatFraction, ladder, parseRhythm, toFactor, toFraction, totalLength } from '@/engine';
+import { gridFor } from '@/engine/exact/grid';
 
 function codeOf(act: () => unknown): string {
   try {
@@ -117,5 +118,13 @@ describe('sums of lengths without a common measure', () => {
     const rhythm = augment(parseRhythm('[1/12 1/10 1/14 1/16]x10000 [1/12 1/10 1/14 1/16]x10000'), '27/8');
     const one = ['1/12', '1/10', '1/14', '1/16'].reduce((total, length) => total.add(length), new Fraction(0));
     expect(totalLength(rhythm).equals(one.mul(20_000).mul('27/8'))).toBe(true);
+  });
+});
+
+describe('gridFor', () => {
+  it('counts up to the longest position, and refuses what would pass the exact integers there', () => {
+    const fine = new Fraction(1, 999_999_937);
+    expect(gridFor([fine], new Fraction(9_000_000)).ticks(fine)).toBe(1);
+    expect(() => gridFor([fine], new Fraction(10_000_000))).toThrow(EngineError);
   });
 });
