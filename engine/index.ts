@@ -101,4 +101,5 @@ export { findTransformations, type Transformation } from './find/find-transforma
 export { nearestTransformation, type FittingStretch, type NearestTransformation } from './find/nearest-transformation';
 
 export { checkAnswer } from './check/check-answer';
+export type { SpellingRemark } from './check/spelling-remarks';
 export { MISTAKES, type CheckInput, type CheckedAnswer, type CheckedValue, type Diagnosis, type Mistake, type MistakeAt, type Verdict } from './check/types';

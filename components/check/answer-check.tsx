@@ -51,7 +51,7 @@ function picture({ values }: CheckedAnswer): { rows: DrawnRow[]; threads: DrawnT
 }
 
 function Verdict({ checked }: { checked: CheckedAnswer }) {
-  const { correct, diagnoses, marks } = checked;
+  const { correct, diagnoses, marks, spelling } = checked;
   const [first, ...others] = diagnoses;
   const [heading, ...rest] = first ? first.message.split(/(?<=[.:]) /) : [];
   return (
@@ -70,6 +70,16 @@ function Verdict({ checked }: { checked: CheckedAnswer }) {
               </li>
             ))}
           </ul>
+        )}
+        {spelling.length > 0 && (
+          <div className="mt-4 max-w-[72ch]" data-testid="spelling">
+            <h3 className="text-[15px] font-semibold">Spelling, apart from the marks</h3>
+            {spelling.map(({ value, message }) => (
+              <p key={value} className="text-soft">
+                {message}
+              </p>
+            ))}
+          </div>
         )}
       </div>
       <div>

@@ -1,17 +1,20 @@
 'use client';
 
-import { useId, useMemo } from 'react';
-import type { Metre } from '@/engine';
+import { useId, useMemo, useState } from 'react';
+import { type Metre, parseRhythm } from '@/engine';
 import { Marked, faultOf } from '../study/rhythm-fault';
 import { RhythmStaff } from '../study/rhythm-staff';
+import { TextButton } from '../ui/button';
+import { StaffPad } from './staff-pad';
 
 /**
- * Rhythm text with its staff, on a page that keeps no study.
- * @param props.lit - attack numbers that stand out on the staff
+ * Rhythm text with its staff, on a page that keeps no study; it can be written on the staff too. Both are one rhythm.
  */
 export function TextField({ label, value, metre, hint, onChange }: { label: string; value: string; metre: Metre; hint?: string; onChange: (text: string) => void }) {
   const id = useId();
+  const [isOnStaff, setOnStaff] = useState(false);
   const fault = useMemo(() => (value.trim() === '' ? null : faultOf(value)), [value]);
+  const rhythm = useMemo(() => (fault ? null : value.trim() === '' ? [] : parseRhythm(value)), [value, fault]);
   const below = fault ? `${id}-fault` : hint ? `${id}-hint` : undefined;
   return (
     <div className="min-w-0">
@@ -42,7 +45,13 @@ export function TextField({ label, value, metre, hint, onChange }: { label: stri
           </p>
         )
       )}
-      {fault === null && value.trim() !== '' && <RhythmStaff text={value} metre={metre} />}
+      {rhythm !== null && !isOnStaff && value.trim() !== '' && <RhythmStaff text={value} metre={metre} />}
+      {rhythm !== null && isOnStaff && <StaffPad name={label} rhythm={rhythm} metre={metre} onChange={onChange} />}
+      {rhythm !== null && (
+        <TextButton className="mt-1 text-[13.5px]" aria-expanded={isOnStaff} aria-label={`${isOnStaff ? 'Leave the staff' : 'Write on the staff'}: ${label}`} onClick={() => setOnStaff(!isOnStaff)}>
+          {isOnStaff ? 'Leave the staff' : 'Write on the staff'}
+        </TextButton>
+      )}
     </div>
   );
 }

@@ -9,6 +9,7 @@ import { type Pairing, align } from './align';
 import { HABITS } from './habits';
 import { heard, isSameRhythm } from './heard';
 import { misreadings } from './misreadings';
+import { spellingRemarks } from './spelling-remarks';
 import { type CheckInput, type CheckedAnswer, type CheckedValue, type Diagnosis, MISTAKES, type Mistake, type MistakeAt } from './types';
 
 const read = (rhythm: Rhythm | string): Rhythm => (typeof rhythm === 'string' ? parseRhythm(rhythm) : rhythm);
@@ -145,7 +146,8 @@ export function checkAnswer({ subject, steps, answer, metre }: CheckInput): Chec
   const firstWrong = pairings.find(({ kind }) => kind !== 'same');
   const at = place(firstWrong === undefined ? 0 : 'key' in firstWrong ? firstWrong.key : Math.max(0, pairings.filter((pairing) => 'key' in pairing && pairings.indexOf(pairing) < pairings.indexOf(firstWrong)).length));
   const bars = barDiagnosis(answer, metre, at);
-  const base = { correct, expected, marks: marksOf(pairings, key.length), values: checkedValues(pairings, key, own) };
+  const spelling = typeof answer === 'string' && metre !== undefined ? spellingRemarks(answer, metre) : [];
+  const base = { correct, expected, spelling, marks: marksOf(pairings, key.length), values: checkedValues(pairings, key, own) };
   if (correct) return { ...base, diagnoses: bars };
 
   const whole = (code: Mistake, what: string, isNear: boolean): Diagnosis => {

@@ -1,6 +1,7 @@
 import type { Rhythm, Value } from '../rhythm/types';
 import type { Metre } from '../rhythm/metre';
 import type { Step } from '../transform/steps';
+import type { SpellingRemark } from './spelling-remarks';
 
 export type Verdict = 'right' | 'wrong-length' | 'wrong-kind' | 'missing' | 'extra';
 
@@ -64,4 +65,6 @@ export type CheckedAnswer = {
   readonly marks: { readonly got: number; readonly of: number };
   readonly values: readonly CheckedValue[];
   readonly diagnoses: readonly Diagnosis[];
+  /** how the answer is spelled, apart from the marks; for an answer in text where a metre is given */
+  readonly spelling: readonly SpellingRemark[];
 };

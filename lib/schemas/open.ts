@@ -23,6 +23,7 @@ export const checkResponse = z.object({
   marks: z.object({ got: z.int(), of: z.int() }),
   values: z.array(z.object({ expected: value.optional(), given: value.optional(), verdict: z.enum(['right', 'wrong-length', 'wrong-kind', 'missing', 'extra']) })),
   diagnoses: z.array(z.object({ code: z.enum(MISTAKES), message: z.string(), at: z.object({ value: z.int(), measure: z.int().optional(), beat: z.string().optional() }) })),
+  spelling: z.array(z.object({ value: z.int(), message: z.string() })).describe('How the answer is spelled, apart from the marks'),
 });
 
 export const findBody = z.strictObject({ from: rhythm, to: rhythm });

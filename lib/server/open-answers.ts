@@ -24,7 +24,7 @@ export const OPEN_ANSWERS: { readonly [K in OpenRoute]: (body: OpenBody<K>) => O
   check({ metre, ...input }) {
     const { expected, values, ...rest } = checkAnswer({ ...input, ...(metre === undefined ? {} : { metre }) });
     const told = values.map(({ expected: key, given, verdict }) => ({ ...(key ? { expected: formatRhythm([key]) } : {}), ...(given ? { given: formatRhythm([given]) } : {}), verdict }));
-    return { ...rest, diagnoses: [...rest.diagnoses], expected: formatRhythm(expected), values: told };
+    return { ...rest, diagnoses: [...rest.diagnoses], spelling: [...rest.spelling], expected: formatRhythm(expected), values: told };
   },
   find({ from, to }) {
     const [a, b] = [parseRhythm(from), parseRhythm(to)];

@@ -57,6 +57,13 @@ test('by attacks, and a measure that does not add up', async ({ page }) => {
   await expect(verdict(page).getByRole('status')).toContainText('Measure 1 lasts 1/2; in 4/4 it should last 1.');
 });
 
+test('spelling is told apart from the marks', async ({ page }) => {
+  await page.goto(address('3/8 1/8 1/2', [], '1/4+1/8 1/8 1/2'));
+  await expect(page.getByRole('heading', { name: 'Right', exact: true })).toBeVisible();
+  await expect(page.getByTestId('marks')).toHaveText('3 of 3 values');
+  await expect(page.getByTestId('spelling')).toContainText('Value 1, of 3/8, is tied together from 2 parts; here one does.');
+});
+
 test('typed with the keyboard alone: a right answer, then one slip, read out with its place and its marks', async ({ page }) => {
   await page.goto('/check');
   await page.getByRole('textbox', { name: 'Your answer' }).focus();
@@ -131,4 +138,30 @@ test('the open API: every example runs on its page', async ({ page }) => {
   await page.getByRole('textbox', { name: 'Body' }).first().fill('{');
   await asks.first().click();
   await expect(page.getByText('This is no JSON.')).toBeVisible();
+});
+
+test('an answer is written on the staff alone, and what is written there is the text', async ({ page }) => {
+  await page.goto(address('1/4 1/8 1/8 1/2', [by('2')], '1/2'));
+  await page.getByRole('button', { name: 'Write on the staff: Your answer' }).click();
+  const pad = page.getByRole('group', { name: 'Your answer, on the staff' });
+  const answer = page.getByRole('textbox', { name: 'Your answer' });
+  await pad.getByRole('radio', { name: 'quarter', exact: true }).check();
+  await pad.getByRole('button', { name: 'Put in', exact: true }).click();
+  await pad.getByRole('button', { name: 'Put in', exact: true }).click();
+  await pad.getByRole('radio', { name: 'half' }).check();
+  await pad.getByRole('button', { name: 'Put in', exact: true }).click();
+  await expect(answer).toHaveValue('1/2 1/4 1/4 1/2');
+  await expect(page.getByTestId('marks')).toHaveText('3 of 4 values');
+  await pad.getByRole('button', { name: 'Tie to the one before' }).click();
+  await expect(answer).toHaveValue('1/2 1/4 1/4 1');
+  await expect(page.getByRole('heading', { name: 'Right', exact: true })).toBeVisible();
+  // A note that is pressed is the place; a triplet rest goes in its place.
+  await pad.locator('[data-origin="1"]').first().click();
+  await expect(pad.getByRole('status')).toHaveText('At value 2 of 4: 1/4.');
+  await pad.getByRole('checkbox', { name: 'rest' }).check();
+  await pad.getByRole('radio', { name: 'of three' }).check();
+  await pad.getByRole('button', { name: 'Put in its place' }).click();
+  await expect(answer).toHaveValue('1/2 (1/3) 1/4 1');
+  await pad.getByRole('button', { name: 'Take away' }).click();
+  await expect(answer).toHaveValue('1/2 (1/3) 1');
 });

@@ -104,3 +104,23 @@ describe('marks', () => {
     ]);
   });
 });
+
+describe('spelling is told apart from the marks', () => {
+  const spelling = (answer: string, metre = '4/4') => check('1/4 (1/4)', [], answer, metre).spelling.map(({ message }) => message);
+  it.each([
+    ['1/4+1/8 (1/4) 3/8', ['Value 1, of 3/8, is tied together from 2 parts; here one does.']],
+    // Where beat 3 must show (Berklee, Imaginary bar lines) the tie is needed.
+    ['1/4 1/4+1/8 3/8', []],
+    ['1/4 1/4+1/16+1/16 3/8', ['Value 2, of 3/8, is tied together from 3 parts; here 2 do.']],
+    ['1/2 (1/4) (1/4)', ['Value 2, a silence of 1/2, is written in 2 rests; here one does.']],
+    // In simple time each beat has its own rest but for a half of the measure (grade-4 page on rests).
+    ['1/4 (1/4) (1/4) 1/4', []],
+    ['3/4 1/4+|1/4 3/4', []],
+    ['[1/4]x4', []],
+    ['3/8> 1/8///@2 1/2^', []],
+  ])('%s', (answer, remarks) => expect(spelling(answer)).toEqual(remarks));
+  it('and costs nothing', () => {
+    expect(check('3/8 1/8 1/2', [], '1/4+1/8 1/8 1/2', '4/4')).toMatchObject({ correct: true, marks: { got: 3, of: 3 }, diagnoses: [], spelling: [{ value: 0 }] });
+    expect(check('3/8 1/8 1/2', [], '1/4+1/8 1/8 1/2').spelling).toEqual([]);
+  });
+});
