@@ -8,6 +8,7 @@ import { accountQuery, signOutEverywhereMutation, updateAccountMutation } from '
 import { errorsOfAnswer } from '@/lib/client/form-errors';
 import type { Account } from '@/lib/schemas/account';
 import { Button } from '../ui/button';
+import { Failed } from '../ui/failed';
 import { Field } from '../ui/field';
 import { Segments } from '../ui/segments';
 import { PasswordForm } from './password-form';
@@ -131,12 +132,7 @@ export function AccountPanels() {
   if (isPending) return <p className="mt-8 text-soft">Opening…</p>;
   if (error) {
     return (
-      <div role="alert" className="mt-8">
-        <p>{error.message}</p>
-        <Button className="mt-3" onClick={() => void refetch()}>
-          Try again
-        </Button>
-      </div>
+      <Failed className="mt-8" message={error.message} onRetry={() => void refetch()} />
     );
   }
   return (

@@ -6,6 +6,7 @@ import { peopleQuery, updatePersonMutation } from '@/lib/client/people-queries';
 import { type Role, roles } from '@/lib/schemas/account';
 import { type PeopleWire, type Person, personItem } from '@/lib/schemas/people';
 import { Button, TextButton } from '../ui/button';
+import { Failed } from '../ui/failed';
 import { Field } from '../ui/field';
 import { useSettled } from '../ui/use-settled';
 
@@ -69,14 +70,7 @@ export function PeopleList({ ownId }: { ownId: string }) {
     <>
       <Field className="mt-6 max-w-96" label="Find by name or address" type="search" maxLength={100} value={text} onChange={(event) => setText(event.target.value)} />
       {isPending && <p className="mt-6 text-soft">Opening…</p>}
-      {error && (
-        <div role="alert" className="mt-6">
-          <p>{error.message}</p>
-          <Button className="mt-3" onClick={() => void refetch()}>
-            Try again
-          </Button>
-        </div>
-      )}
+      {error && <Failed className="mt-6" message={error.message} onRetry={() => void refetch()} />}
       {people?.length === 0 && <p className="mt-6 text-soft">Nobody is called that.</p>}
       {people && people.length > 0 && (
         <div className="mt-6">

@@ -6,6 +6,7 @@ import { restoreStudyMutation } from '@/lib/client/studies-mutations';
 import { ownStudyListQuery } from '@/lib/client/studies-queries';
 import { DELETED_DAYS, type StudyListItem, type StudySort } from '@/lib/schemas/studies';
 import { Button, TextButton } from '../ui/button';
+import { Failed } from '../ui/failed';
 import { Field } from '../ui/field';
 import { Segments } from '../ui/segments';
 import { useSettled } from '../ui/use-settled';
@@ -57,14 +58,7 @@ export function OwnStudies() {
       </div>
       {gone && <Undo study={gone} onDone={() => onChanged()} />}
       {isPending && <p className="py-3.5 text-soft">Opening…</p>}
-      {error && (
-        <div role="alert" className="py-3.5">
-          <p>{error.message}</p>
-          <Button className="mt-3" onClick={() => void refetch()}>
-            Try again
-          </Button>
-        </div>
-      )}
+      {error && <Failed className="py-3.5" message={error.message} onRetry={() => void refetch()} />}
       {studies?.length === 0 && <p className="py-3.5 text-soft">{emptyWords(isDeleted, q)}</p>}
       <ul role="list" aria-label={isDeleted ? 'Deleted studies' : 'Your studies'}>
         {studies?.map((study) =>

@@ -8,6 +8,7 @@ import { beginStudy } from '@/lib/client/new-study';
 import { type DraftEntry, isLocal, listDrafts } from '@/lib/client/study-draft';
 import { studyListQuery } from '@/lib/client/studies-queries';
 import { Button } from '../ui/button';
+import { Failed } from '../ui/failed';
 import { PageHeading } from '../ui/page-heading';
 import { OwnStudies } from './own-studies';
 import { StudyRow } from './study-row';
@@ -75,14 +76,7 @@ export function StudiesList({ isSignedIn }: { isSignedIn: boolean }) {
       )}
       <h2 className="mt-10 border-b border-ink pb-1.5 text-[15px] font-semibold">Demonstrations</h2>
       {isPending && <p className="py-3.5 text-soft">Opening…</p>}
-      {error && (
-        <div role="alert" className="py-3.5">
-          <p>{error.message}</p>
-          <Button className="mt-3" onClick={() => void refetch()}>
-            Try again
-          </Button>
-        </div>
-      )}
+      {error && <Failed className="py-3.5" message={error.message} onRetry={() => void refetch()} />}
       <ul role="list">
         {data?.map((study) => (
           <StudyRow key={study.id} study={study} note={<span className="block max-w-[80ch] font-serif text-[17px]">{study.summary}</span>} />

@@ -1,10 +1,9 @@
 import { z } from 'zod';
 import { field, plain, playersParts, readingPart, subjectParts, word } from '../describe/sentence-parts';
 import { times } from '../describe/words';
-import { ZERO } from '../exact/fraction';
 import { reading, repeats } from '../study/fields';
-import { plainStatement, successive } from './plain-statement';
-import { read, repeated } from './read';
+import { stagesInTurn } from './plain-statement';
+import { read } from './read';
 import type { ProcessRules } from './types';
 
 const schema = z.strictObject({
@@ -25,24 +24,12 @@ export const additive: ProcessRules<typeof schema> = {
   begin: () => ({ kind: 'additive', direction: 'growing', from: 'front', repeatsEach: 2, reading: 'forwards' }),
   takesSubject: true,
   size: ({ process, subject }) => (process.repeatsEach * subject.length * (subject.length + 1)) / 2,
-  statements({ section, process, subject, instruments }) {
+  statements(context) {
+    const { process, subject } = context;
     const figure = read(subject, process.reading);
     const sizes = figure.map((_, index) => index + 1);
     if (process.direction === 'shrinking') sizes.reverse();
-    const stages = sizes.map((size) => (process.from === 'front' ? figure.slice(0, size) : figure.slice(figure.length - size)));
-    return successive(
-      stages.map((stage, index) => (start) =>
-        plainStatement({
-          start,
-          instrument: instruments[index % instruments.length]!,
-          subject: section.subject ?? null,
-          reading: process.reading ?? 'forwards',
-          repeats: process.repeatsEach,
-          values: repeated(stage, process.repeatsEach),
-        }),
-      ),
-      ZERO,
-    );
+    return stagesInTurn(context, sizes.map((size) => (process.from === 'front' ? figure.slice(0, size) : figure.slice(figure.length - size))));
   },
   sentence: ({ study, section, process }) => [
     ...subjectParts(study, section),

@@ -2,13 +2,12 @@ import { z } from 'zod';
 import { field, plain, playersParts, readingPart, subjectParts, word } from '../describe/sentence-parts';
 import { times } from '../describe/words';
 import { EngineError } from '../errors';
-import { ZERO } from '../exact/fraction';
 import { LIMITS } from '../limits';
 import { reading, repeats } from '../study/fields';
 import type { Value } from '../rhythm/types';
 import { silenced } from '../transform/rotate';
-import { plainStatement, successive } from './plain-statement';
-import { read, repeated } from './read';
+import { stagesInTurn } from './plain-statement';
+import { read } from './read';
 import type { ProcessRules, TracedValue } from './types';
 
 const schema = z.strictObject({
@@ -44,23 +43,11 @@ export const fillingIn: ProcessRules<typeof schema> = {
   begin: (subject) => ({ kind: 'filling-in', order: Array.from({ length: Math.min(attackCount(subject), LIMITS.statements) }, (_, attack) => attack), repeatsEach: 2, reading: 'forwards' }),
   takesSubject: true,
   size: ({ process, subject }) => (process.order.length + 1) * process.repeatsEach * subject.length,
-  statements({ section, process, path, subject, instruments }) {
+  statements(context) {
+    const { process, path, subject } = context;
     const figure = read(subject, process.reading);
     checkOrder(process.order, attackCount(figure), path);
-    const stages = Array.from({ length: process.order.length + 1 }, (_, k) => sounding(figure, new Set(process.order.slice(0, k))));
-    return successive(
-      stages.map((stage, index) => (start) =>
-        plainStatement({
-          start,
-          instrument: instruments[index % instruments.length]!,
-          subject: section.subject ?? null,
-          reading: process.reading ?? 'forwards',
-          repeats: process.repeatsEach,
-          values: repeated(stage, process.repeatsEach),
-        }),
-      ),
-      ZERO,
-    );
+    return stagesInTurn(context, Array.from({ length: process.order.length + 1 }, (_, k) => sounding(figure, new Set(process.order.slice(0, k)))));
   },
   sentence: ({ study, section, process }) => [
     ...subjectParts(study, section),

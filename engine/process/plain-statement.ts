@@ -1,5 +1,7 @@
-import { type Fraction, ONE, sum } from '../exact/fraction';
-import type { Placed, TracedValue } from './types';
+import { type Fraction, ONE, ZERO, sum } from '../exact/fraction';
+import type { Reading } from '../rhythm/types';
+import { repeated } from './read';
+import type { Placed, ProcessContext, TracedValue } from './types';
 
 type Given = Pick<Placed, 'start' | 'instrument' | 'subject'> & Partial<Omit<Placed, 'length' | 'end' | 'values'>> & { readonly values: readonly TracedValue[]; readonly length?: Fraction };
 
@@ -17,4 +19,16 @@ export function successive(statements: readonly ((start: Fraction) => Placed)[],
     at = placed.end;
     return placed;
   });
+}
+
+type Staged = Pick<ProcessContext<{ reading?: Reading | undefined; repeatsEach: number }>, 'section' | 'process' | 'instruments'>;
+
+/** Figures played one after another, each so many times, by the instruments in turn. */
+export function stagesInTurn({ section, process: { reading = 'forwards', repeatsEach }, instruments }: Staged, stages: readonly (readonly TracedValue[])[]): Placed[] {
+  return successive(
+    stages.map((stage, index) => (start) =>
+      plainStatement({ start, instrument: instruments[index % instruments.length]!, subject: section.subject ?? null, reading, repeats: repeatsEach, values: repeated(stage, repeatsEach) }),
+    ),
+    ZERO,
+  );
 }
