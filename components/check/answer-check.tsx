@@ -2,6 +2,7 @@
 
 import { useMemo } from 'react';
 import { type CheckedAnswer, EngineError, type Metre, type Rhythm, checkAnswer, formatRhythm, parseMetre, parseRhythm, stepWords } from '@/engine';
+import { tidyRhythm } from '@/lib/client/typed-rhythm';
 import type { Steps } from '../study/steps-editor';
 import { StepsEditor } from '../study/steps-editor';
 import { Button } from '../ui/button';
@@ -14,7 +15,7 @@ import { Worked } from './worked';
 /** Reads what can be read; null where a text is empty or cannot. */
 export function readRhythm(text: string): Rhythm | null {
   try {
-    return text.trim() === '' ? null : parseRhythm(text);
+    return text.trim() === '' ? null : parseRhythm(tidyRhythm(text));
   } catch (error) {
     if (error instanceof EngineError) return null;
     throw error;
@@ -26,7 +27,7 @@ type Checked = { readonly checked: CheckedAnswer } | { readonly problem: string 
 function check(subject: string, steps: Steps, answer: string, metre: Metre): Checked {
   if (readRhythm(subject) === null || readRhythm(answer) === null) return null;
   try {
-    return { checked: checkAnswer({ subject, steps, answer, metre }) };
+    return { checked: checkAnswer({ subject: tidyRhythm(subject), steps, answer: tidyRhythm(answer), metre }) };
   } catch (error) {
     if (error instanceof EngineError) return { problem: error.message };
     throw error;
@@ -48,6 +49,18 @@ function picture({ values }: CheckedAnswer): { rows: DrawnRow[]; threads: DrawnT
     if (own) [to, givenAt] = [to + 1, givenAt + own.length.valueOf()];
   }
   return { rows: [{ label: 'Should be', values: key, isQuiet: true }, { label: 'Yours', values: given, wrong }], threads };
+}
+
+/** The attacks of the answer that are wrong, by their number in it. */
+function wrongAttacks({ values }: CheckedAnswer): ReadonlySet<number> {
+  const wrong = new Set<number>();
+  let attack = -1;
+  for (const { given, verdict } of values) {
+    if (given === undefined || given.rest) continue;
+    attack += 1;
+    if (verdict !== 'right') wrong.add(attack);
+  }
+  return wrong;
 }
 
 function Verdict({ checked }: { checked: CheckedAnswer }) {
@@ -105,10 +118,11 @@ const isMetre = (text: string): boolean => {
 /** A worked transformation, checked: what is wrong first, where, and the habit that avoids it. */
 export function AnswerCheck({ state, set }: { state: CheckState; set: (change: Partial<CheckState>) => void }) {
   const { subject, answer, steps } = state;
-  const metre = isMetre(state.metre) ? state.metre : '4/4';
+  const metre = isMetre(state.metre) ? parseMetre(state.metre).text : '4/4';
   const result = useMemo(() => check(subject, steps, answer, metre), [subject, steps, answer, metre]);
   const checked = result !== null && 'checked' in result ? result.checked : null;
   const drawn = useMemo(() => (checked ? picture(checked) : null), [checked]);
+  const wrong = useMemo(() => (checked ? wrongAttacks(checked) : undefined), [checked]);
   const { heard, hear, stop, playing } = useHearing();
   const from = readRhythm(subject);
   const sounds: [string, Rhythm | null][] = [['the subject', from], ['what it should be', checked?.expected ?? null], ['the answer', readRhythm(answer)]];
@@ -131,7 +145,7 @@ export function AnswerCheck({ state, set }: { state: CheckState; set: (change: P
       </p>
       <div className="mt-6 grid gap-6">
         <TextField label="Subject" value={subject} metre={metre} hint="Lengths in whole notes; rests in round brackets; 1/4+1/16 is tied; | is a bar line." onChange={(text) => set({ subject: text })} />
-        <TextField label="Your answer" value={answer} metre={metre} onChange={(text) => set({ answer: text })} />
+        <TextField label="Your answer" value={answer} metre={metre} {...(wrong ? { wrong } : {})} onChange={(text) => set({ answer: text })} />
         <label className="w-fit text-[14px]">
           Metre{' '}
           <input

@@ -2,6 +2,7 @@
 
 import { useId, useMemo, useState } from 'react';
 import { type Metre, parseRhythm } from '@/engine';
+import { tidyRhythm } from '@/lib/client/typed-rhythm';
 import { Marked, faultOf } from '../study/rhythm-fault';
 import { RhythmStaff } from '../study/rhythm-staff';
 import { TextButton } from '../ui/button';
@@ -9,12 +10,14 @@ import { StaffPad } from './staff-pad';
 
 /**
  * Rhythm text with its staff, on a page that keeps no study; it can be written on the staff too. Both are one rhythm.
+ * @param props.wrong - numbers of attacks that stand out on the staff
  */
-export function TextField({ label, value, metre, hint, onChange }: { label: string; value: string; metre: Metre; hint?: string; onChange: (text: string) => void }) {
+export function TextField({ label, value, metre, hint, wrong, onChange }: { label: string; value: string; metre: Metre; hint?: string; wrong?: ReadonlySet<number>; onChange: (text: string) => void }) {
   const id = useId();
   const [isOnStaff, setOnStaff] = useState(false);
-  const fault = useMemo(() => (value.trim() === '' ? null : faultOf(value)), [value]);
-  const rhythm = useMemo(() => (fault ? null : value.trim() === '' ? [] : parseRhythm(value)), [value, fault]);
+  const read = tidyRhythm(value);
+  const fault = useMemo(() => (read.trim() === '' ? null : faultOf(read)), [read]);
+  const rhythm = useMemo(() => (fault ? null : read.trim() === '' ? [] : parseRhythm(read)), [read, fault]);
   const below = fault ? `${id}-fault` : hint ? `${id}-hint` : undefined;
   return (
     <div className="min-w-0">
@@ -35,7 +38,7 @@ export function TextField({ label, value, metre, hint, onChange }: { label: stri
       />
       {fault ? (
         <div id={below} role="alert" className="mt-1.5 text-[14px] text-mark">
-          <Marked text={value} fault={fault} />
+          <Marked text={read} fault={fault} />
           {fault.message}
         </div>
       ) : (
@@ -45,7 +48,7 @@ export function TextField({ label, value, metre, hint, onChange }: { label: stri
           </p>
         )
       )}
-      {rhythm !== null && !isOnStaff && value.trim() !== '' && <RhythmStaff text={value} metre={metre} />}
+      {rhythm !== null && !isOnStaff && value.trim() !== '' && <RhythmStaff text={read} metre={metre} wrong={wrong} />}
       {rhythm !== null && isOnStaff && <StaffPad name={label} rhythm={rhythm} metre={metre} onChange={onChange} />}
       {rhythm !== null && (
         <TextButton className="mt-1 text-[13.5px]" aria-expanded={isOnStaff} aria-label={`${isOnStaff ? 'Leave the staff' : 'Write on the staff'}: ${label}`} onClick={() => setOnStaff(!isOnStaff)}>

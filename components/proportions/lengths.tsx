@@ -74,7 +74,7 @@ export function LengthsCalculator({ lengths, claim, set }: { lengths: string; cl
             value={claim}
             hint="A number: 3/2 is half as long again."
             onTry={(text) => {
-              readNumber(text);
+              checkLadder(['1', '1'], readNumber(text));
               set({ claim: text.trim() });
             }}
           />

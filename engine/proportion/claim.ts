@@ -1,4 +1,5 @@
-import { type Exact, type Fraction, formatFraction, toFraction } from '../exact/fraction';
+import { EngineError } from '../errors';
+import { type Exact, type Fraction, ZERO, formatFraction, toFraction } from '../exact/fraction';
 import { ladder } from './ladder';
 
 /** Whether a run of lengths grows by one ratio, as somebody claims. */
@@ -20,6 +21,7 @@ export type LadderClaim = {
 export function checkLadder(lengths: readonly Exact[], ratio: Exact): LadderClaim {
   const { steps } = ladder(lengths);
   const claimed = toFraction(ratio);
+  if (claimed.compare(ZERO) <= 0) throw new EngineError('invalid_argument', 'The ratio of a claim must be above 0.');
   const given = lengths.map((length) => toFraction(length));
   const run: Fraction[] = [];
   for (const [index, first] of given.entries()) run.push(index === 0 ? first : run[index - 1]!.mul(claimed));

@@ -1,6 +1,7 @@
 import { EngineError, type Fraction, toFraction } from '@/engine';
 
-const VULGAR: Readonly<Record<string, string>> = {
+/** Fractions that are one character. */
+export const VULGAR: Readonly<Record<string, string>> = {
   '½': '1/2', '⅓': '1/3', '⅔': '2/3', '¼': '1/4', '¾': '3/4', '⅕': '1/5', '⅖': '2/5', '⅗': '3/5', '⅘': '4/5', '⅙': '1/6', '⅚': '5/6', '⅐': '1/7', '⅛': '1/8', '⅜': '3/8', '⅝': '5/8', '⅞': '7/8', '⅑': '1/9', '⅒': '1/10',
 };
 /** Words that people write after a number, and that say nothing more here. */
@@ -45,7 +46,7 @@ export function readNumbers(text: string): Fraction[] {
   const hasStrong = /[;\n\t]/.test(spread);
   const separated = spread.split(hasStrong ? /[;\n\t]+/ : /,\s*/);
   // Numbers with spaces alone between them, none of which is a mixed number.
-  const parts = separated.length === 1 && !/\d\s+\d+\s*\//.test(spread) && /\d\s+[\d.]/.test(spread) ? spread.split(/\s+/) : separated;
+  const parts = separated.length === 1 && !/(?:^|[^\d/.])\d+\s+\d+\s*\//.test(spread) && /\d\s+[\d.]/.test(spread) ? spread.split(/\s+/) : separated;
   const given = parts.map((part) => part.trim()).filter((part) => part !== '');
   if (given.length === 0) throw new EngineError('invalid_fraction', 'Nothing is written here. Write numbers with commas between, such as 4, 6, 9.');
   return given.map(readNumber);

@@ -57,6 +57,13 @@ test('by attacks, and a measure that does not add up', async ({ page }) => {
   await expect(verdict(page).getByRole('status')).toContainText('Measure 1 lasts 1/2; in 4/4 it should last 1.');
 });
 
+test('the wrong place stands out on the staff', async ({ page }) => {
+  await page.goto(address('1/4 1/8 1/8 1/2', [by('2')], '1/2 1/4 3/8 1'));
+  const wrong = page.getByTestId('rhythm-staff').nth(1).locator('[data-origin].wrong');
+  await expect(wrong).not.toHaveCount(0);
+  expect(new Set(await wrong.evaluateAll((notes) => notes.map((note) => note.getAttribute('data-origin'))))).toEqual(new Set(['2']));
+});
+
 test('spelling is told apart from the marks', async ({ page }) => {
   await page.goto(address('3/8 1/8 1/2', [], '1/4+1/8 1/8 1/2'));
   await expect(page.getByRole('heading', { name: 'Right', exact: true })).toBeVisible();

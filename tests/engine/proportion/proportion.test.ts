@@ -155,6 +155,9 @@ describe('a claim about a run of lengths', () => {
     expect(checkLadder(['4', '6', '9', '13 1/2'], '3/2')).toMatchObject({ holds: true });
     expect(claimWords(checkLadder(['4', '6', '9', '13 1/2'], '3/2'))).toBe('The claim holds: every step is the same.');
   });
+  it('a ratio of nothing or less is refused', () => {
+    for (const ratio of ['0', '-3/2']) expect(errorOf(() => checkLadder(['4', '6'], ratio)).code).toBe('invalid_argument');
+  });
   it('lengths that are no whole numbers are told as mixed numbers', () => {
     expect(claimWords(checkLadder(['5', '7 1/2', '10 1/2'], '3/2'))).toBe('The claim fails at step 2: length 3 is 10 1/2, 7/5 of the one before it; it would be 11 1/4. 5, 7 1/2, 11 1/4 would satisfy it.');
   });
