@@ -6,6 +6,7 @@ import { tidyRhythm } from '@/lib/client/typed-rhythm';
 import { Marked, faultOf } from '../study/rhythm-fault';
 import { RhythmStaff } from '../study/rhythm-staff';
 import { TextButton } from '../ui/button';
+import { FromFile } from './from-file';
 import { StaffPad } from './staff-pad';
 
 /**
@@ -50,11 +51,14 @@ export function TextField({ label, value, metre, hint, wrong, onChange }: { labe
       )}
       {rhythm !== null && !isOnStaff && value.trim() !== '' && <RhythmStaff text={read} metre={metre} wrong={wrong} />}
       {rhythm !== null && isOnStaff && <StaffPad name={label} rhythm={rhythm} metre={metre} onChange={onChange} />}
-      {rhythm !== null && (
-        <TextButton className="mt-1 text-[13.5px]" aria-expanded={isOnStaff} aria-label={`${isOnStaff ? 'Leave the staff' : 'Write on the staff'}: ${label}`} onClick={() => setOnStaff(!isOnStaff)}>
-          {isOnStaff ? 'Leave the staff' : 'Write on the staff'}
-        </TextButton>
-      )}
+      <div className="mt-1 flex flex-wrap items-baseline gap-x-5 gap-y-1">
+        {rhythm !== null && (
+          <TextButton className="text-[13.5px]" aria-expanded={isOnStaff} aria-label={`${isOnStaff ? 'Leave the staff' : 'Write on the staff'}: ${label}`} onClick={() => setOnStaff(!isOnStaff)}>
+            {isOnStaff ? 'Leave the staff' : 'Write on the staff'}
+          </TextButton>
+        )}
+        <FromFile name={label} onRhythm={onChange} />
+      </div>
     </div>
   );
 }

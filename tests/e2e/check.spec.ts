@@ -172,3 +172,20 @@ test('an answer is written on the staff alone, and what is written there is the 
   await pad.getByRole('button', { name: 'Take away' }).click();
   await expect(answer).toHaveValue('1/2 (1/3) 1');
 });
+
+test('an answer comes from a file: rhythm text, MusicXML with a choice of lines, and what is wrong with one', async ({ page }) => {
+  await page.goto(address('1/4 1/8', [by('2')], '1/2'));
+  const answer = page.getByRole('textbox', { name: 'Your answer' });
+  const input = page.getByLabel('From a file: Your answer');
+  await input.setInputFiles({ name: 'answer.txt', mimeType: 'text/plain', buffer: Buffer.from('½ ¼\n') });
+  await expect(answer).toHaveValue('1/2 1/4');
+  await expect(page.getByRole('heading', { name: 'Right', exact: true })).toBeVisible();
+  const part = (id: string, duration: number) => `<part id="${id}"><measure number="1"><attributes><divisions>2</divisions></attributes><note><unpitched/><duration>${duration}</duration></note></measure></part>`;
+  const xml = `<score-partwise><part-list><score-part id="P1"><part-name>Claves</part-name></score-part><score-part id="P2"><part-name>Bongos</part-name></score-part></part-list>${part('P1', 4)}${part('P2', 3)}</score-partwise>`;
+  await input.setInputFiles({ name: 'two.musicxml', mimeType: 'application/xml', buffer: Buffer.from(xml) });
+  await page.getByRole('button', { name: 'Bongos' }).click();
+  await expect(answer).toHaveValue('3/8');
+  await input.setInputFiles({ name: 'bad.xml', mimeType: 'application/xml', buffer: Buffer.from('<!DOCTYPE a [<!ENTITY x "y">]><a>&x;</a>') });
+  await expect(alert(page)).toContainText('This file defines entities of its own');
+  await expect(answer).toHaveValue('3/8');
+});
