@@ -18,13 +18,13 @@ function time(metre: string): string {
   return `<time><beats>${text.includes('+') ? text.split('/')[0] : count}</beats><beat-type>${unit}</beat-type></time>`;
 }
 
-function note(symbol: NotationSymbol, id: string, divisions: bigint): string {
-  const { base, dots, rest, tuplets, tiedFromBefore, tiedOn } = symbol;
+function note(symbol: NotationSymbol, id: string, divisions: bigint, withBeams: boolean): string {
+  const { base, dots, rest, tuplets, tiedFromBefore, tiedOn, beams } = symbol;
   const duration = symbolLength(symbol).mul(4).mul(new Fraction(divisions));
   if (duration.d !== 1n) throw new RangeError('divisions do not hold this symbol');
   const ratio = tuplets.reduce(({ actual, normal }, mark) => ({ actual: actual * mark.actual, normal: normal * mark.normal }), { actual: 1, normal: 1 });
   const marks = tuplets.flatMap((mark, level) => [
-    ...(mark.starts ? [`<tuplet type="start" number="${level + 1}"><tuplet-actual><tuplet-number>${mark.actual}</tuplet-number></tuplet-actual><tuplet-normal><tuplet-number>${mark.normal}</tuplet-number></tuplet-normal></tuplet>`] : []),
+    ...(mark.starts ? [`<tuplet type="start" number="${level + 1}"/>`] : []),
     ...(mark.stops ? [`<tuplet type="stop" number="${level + 1}"/>`] : []),
   ]);
   const tied = `${tiedFromBefore ? '<tied type="stop"/>' : ''}${tiedOn ? '<tied type="start"/>' : ''}`;
@@ -37,22 +37,22 @@ function note(symbol: NotationSymbol, id: string, divisions: bigint): string {
     `<type>${TYPES[base]}</type>`,
     '<dot/>'.repeat(dots),
     tuplets.length > 0 ? `<time-modification><actual-notes>${ratio.actual}</actual-notes><normal-notes>${ratio.normal}</normal-notes></time-modification>` : '',
+    ...(withBeams ? beams : []).map((word, level) => `<beam number="${level + 1}">${word}</beam>`),
     marks.length > 0 || tied !== '' ? `<notations>${tied}${marks.join('')}</notations>` : '',
     '</note>',
   ].join('');
 }
 
 /**
- * Spelled measures as a MusicXML 4.0 part, for a reader that is not ours; what it says comes from the symbols alone. Notes that
- * are struck are called `a0`, `a1` and so on, what is tied to them and rests otherwise.
+ * Spelled measures as a MusicXML 4.0 part, for a reader that is not ours; what it says comes from the symbols alone. Symbols are
+ * called `n0`, `n1` and so on, so that no name tells what is struck and what is tied.
  */
-export function spelledMusicXML(measures: readonly NotationMeasure[]): string {
+export function spelledMusicXML(measures: readonly NotationMeasure[], { withBeams = true } = {}): string {
   const divisions = divisionsOf(measures);
-  let attack = 0;
-  let other = 0;
+  let count = 0;
   const bars = measures.map(({ metre, symbols }, index) => {
     const attributes = index === 0 || measures[index - 1]!.metre !== metre ? `<attributes>${index === 0 ? `<divisions>${divisions}</divisions>` : ''}${time(metre)}${index === 0 ? '<clef><sign>percussion</sign></clef>' : ''}</attributes>` : '';
-    const notes = symbols.map((symbol) => note(symbol, symbol.rest || symbol.tiedFromBefore ? `t${other++}` : `a${attack++}`, divisions));
+    const notes = symbols.map((symbol) => note(symbol, `n${count++}`, divisions, withBeams));
     return `<measure number="${index + 1}">${attributes}${notes.join('')}</measure>`;
   });
   return `<?xml version="1.0" encoding="UTF-8"?><score-partwise version="4.0"><part-list><score-part id="P1"><part-name>Line</part-name></score-part></part-list><part id="P1">${bars.join('')}</part></score-partwise>`;
