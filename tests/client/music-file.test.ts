@@ -1,10 +1,14 @@
-// @vitest-environment jsdom
 import fs from 'node:fs';
 import path from 'node:path';
-import { describe, expect, it } from 'vitest';
+import { JSDOM } from 'jsdom';
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { formatRhythm, parseRhythm, spellLine } from '@/engine';
 import { MusicFileError, readMusicFile } from '@/lib/client/music-file';
 import { spelledMusicXML } from '../helpers/spelled-musicxml';
+
+// The browser's reader of XML alone: a whole jsdom environment would be built for the browser, where node:fs is not to be had.
+beforeAll(() => void vi.stubGlobal('DOMParser', new JSDOM().window.DOMParser));
+afterAll(() => void vi.unstubAllGlobals());
 
 const note = (duration: number, inside = '', rest = false) => `<note>${rest ? '<rest/>' : '<unpitched/>'}<duration>${duration}</duration>${inside}</note>`;
 const file = (measures: string, more = '') =>

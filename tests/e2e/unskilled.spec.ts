@@ -65,6 +65,8 @@ const RHYTHM: Inputs = [
 test('ten unskilled inputs for the rhythms and the metre of Check', async ({ page }) => {
   test.setTimeout(120_000);
   await page.goto(`/check?${new URLSearchParams({ subject: '1/4 1/8', answer: '1/4 1/8', steps: '[]' })}`);
+  // Notes are drawn in the browser only: where they stand, the page answers to typing.
+  await expect(page.locator('main [data-origin]').first()).toBeVisible();
   for (const label of ['Subject', 'Your answer']) {
     const field = page.getByRole('textbox', { name: label, exact: true });
     for (const [typed, understood] of RHYTHM) {

@@ -75,7 +75,8 @@ describe('repeats', () => {
         }
         expect(free).toBeLessThanOrEqual(made.measures.length);
       }),
-      { numRuns: 150 },
+      // A fixed seed: that something was folded at all must not depend on luck.
+      { numRuns: 150, seed: 1 },
     );
     expect(folded).toBeGreaterThan(0);
   });
