@@ -18,7 +18,7 @@ export { ladder, type Ladder } from './proportion/ladder';
 export { checkLadder, claimWords, type LadderClaim } from './proportion/claim';
 export { alignment } from './proportion/alignment';
 export { canonEntries, type CanonVoice } from './proportion/canon-entries';
-export { cyclesOf, type Cycles } from './proportion/cycles';
+export { meetingOf, type EnteringCycle, type Meeting } from './proportion/meeting';
 export { divide, fibonacci, roundParts, type RoundedPart } from './proportion/divide';
 export { proportionName, proportionOf, type NamedProportion, type ProportionGenus } from './proportion/named';
 export { pivotFor, tempoChain, type ChainedTempo, type Pivot } from './proportion/tempo-chain';

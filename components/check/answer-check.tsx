@@ -51,6 +51,44 @@ function picture({ values }: CheckedAnswer): { rows: DrawnRow[]; threads: DrawnT
   return { rows: [{ label: 'Should be', values: key, isQuiet: true }, { label: 'Yours', values: given, wrong }], threads };
 }
 
+const VERDICTS: Readonly<Record<CheckedAnswer['values'][number]['verdict'], string>> = {
+  right: 'right, 1 mark', 'wrong-length': 'wrong length', 'wrong-kind': 'a rest for an attack, or the reverse', missing: 'missing', extra: 'too many',
+};
+
+/** Every value of the key beside the answer's, with its mark. */
+function ValueTable({ checked: { values } }: { checked: CheckedAnswer }) {
+  return (
+    <details className="mt-8 border-t border-hair pt-4">
+      <summary className="w-fit cursor-pointer font-semibold">Marks value by value</summary>
+      <div className="mt-3 max-h-[420px] overflow-auto" role="region" aria-label="Marks value by value" tabIndex={0}>
+        <table className="text-left text-[14.5px]">
+          <thead>
+            <tr className="text-[13px] text-soft">
+              {['Value', 'Should be', 'Yours', 'Mark'].map((heading) => (
+                <th key={heading} scope="col" className="pb-1 pr-8 font-normal">
+                  {heading}
+                </th>
+              ))}
+            </tr>
+          </thead>
+          <tbody>
+            {values.map(({ expected, given, verdict }, index) => (
+              <tr key={index} className="border-t border-hair">
+                <th scope="row" className="py-1 pr-8 font-normal text-soft">
+                  {index + 1}
+                </th>
+                <td className="pr-8 font-mono">{expected ? formatRhythm([expected]) : '–'}</td>
+                <td className={`pr-8 font-mono ${verdict === 'right' ? '' : 'text-mark'}`}>{given ? formatRhythm([given]) : '–'}</td>
+                <td>{VERDICTS[verdict]}</td>
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      </div>
+    </details>
+  );
+}
+
 /** The attacks of the answer that are wrong, by their number in it. */
 function wrongAttacks({ values }: CheckedAnswer): ReadonlySet<number> {
   const wrong = new Set<number>();
@@ -176,6 +214,7 @@ export function AnswerCheck({ state, set }: { state: CheckState; set: (change: P
             <Rows {...drawn} measure={parseMetre(metre).length} label={`Should be: ${formatRhythm(checked.expected)}. Yours: ${answer}.`} />
           </div>
           <Verdict checked={checked} />
+          <ValueTable checked={checked} />
           {from && steps.length > 0 && (
             <details className="mt-8 border-t border-hair pt-4">
               <summary className="w-fit cursor-pointer font-semibold">Worked step by step</summary>

@@ -1,4 +1,4 @@
-import { EngineError, type Fraction, toFraction } from '@/engine';
+import { EngineError, type Fraction, proportionOf, toFraction } from '@/engine';
 
 /** Fractions that are one character. */
 export const VULGAR: Readonly<Record<string, string>> = {
@@ -22,10 +22,12 @@ function tidy(text: string): string {
 
 const HINT = 'Write a number such as 3, 3/2, 1 1/2, 1.5 or 150%.';
 
-/** @throws EngineError with a sentence that says what to type */
+/** One number, or the old name of a proportion: sesquialtera is 3/2. @throws EngineError with a sentence that says what to type */
 export function readNumber(text: string): Fraction {
   const tidied = tidy(text);
   if (tidied === '') throw new EngineError('invalid_fraction', `Nothing is written here. ${HINT}`);
+  const named = proportionOf(tidied);
+  if (named) return named;
   // A comma is a decimal point where it stands alone between digits.
   const decimal = tidied.replace(/^([+\-−]?\d+),(\d+)(%?)$/, '$1.$2$3');
   try {
@@ -37,17 +39,21 @@ export function readNumber(text: string): Fraction {
 }
 
 /**
- * Several numbers, apart by semicolons, line ends or tabs, or by commas and “and” where there are none of these: then a comma is
- * no decimal point. What is pasted from a spreadsheet comes in lines and tabs.
- * @throws EngineError with a sentence that says what to type
+ * The items of a list as people type it: apart by semicolons, line ends or tabs, or by commas and “and” where there are none of
+ * these: then a comma is no decimal point. What is pasted from a spreadsheet comes in lines and tabs.
  */
-export function readNumbers(text: string): Fraction[] {
+export function splitList(text: string): string[] {
   const spread = text.trim().replace(/\s+and\s+/gi, ', ');
   const hasStrong = /[;\n\t]/.test(spread);
   const separated = spread.split(hasStrong ? /[;\n\t]+/ : /,\s*/);
   // Numbers with spaces alone between them, none of which is a mixed number.
-  const parts = separated.length === 1 && !/(?:^|[^\d/.])\d+\s+\d+\s*\//.test(spread) && /\d\s+[\d.]/.test(spread) ? spread.split(/\s+/) : separated;
-  const given = parts.map((part) => part.trim()).filter((part) => part !== '');
+  const isSpaced = separated.length === 1 && !/(?:^|[^\d/.])\d+\s+\d+\s*\//.test(spread) && /^[\d.,/%\s-]+$/.test(spread) && /\d\s+[\d.]/.test(spread);
+  return (isSpaced ? spread.split(/\s+(?![/%])(?<!\/\s*)/) : separated).map((part) => part.trim()).filter((part) => part !== '');
+}
+
+/** Several numbers. @throws EngineError with a sentence that says what to type */
+export function readNumbers(text: string): Fraction[] {
+  const given = splitList(text);
   if (given.length === 0) throw new EngineError('invalid_fraction', 'Nothing is written here. Write numbers with commas between, such as 4, 6, 9.');
   return given.map(readNumber);
 }

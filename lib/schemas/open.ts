@@ -56,8 +56,16 @@ export const stretchResponse = z.object({
 export const tempoBody = z.strictObject({ tempo, pivots: z.array(z.strictObject({ before: exact, after: exact })).max(32) });
 export const tempoResponse = z.object({ tempos: z.array(z.object({ perMinute: fraction, factor: fraction, metronome: fraction, off: fraction.describe('Beats that a metronome of whole numbers is ahead after a minute') })) });
 
-export const alignmentBody = z.strictObject({ cycles: list });
-export const alignmentResponse = z.object({ meet: fraction, turns: z.array(fraction), pulse: fraction, states: fraction });
+const cycle = z.union([exact, z.strictObject({ length: exact, entry: exact.optional().describe('When it enters; 0 where nothing is said'), repeats: z.int().min(1).max(1_000_000_000).optional().describe('How often it turns; without end where nothing is said') })]);
+export const alignmentBody = z.strictObject({ cycles: z.array(cycle).min(1).max(OPEN_ITEMS) });
+export const alignmentResponse = z.object({
+  meet: fraction.nullable().describe('null where they never begin a turn together'),
+  turns: z.array(fraction),
+  period: fraction.describe('How long after that they meet again'),
+  pulse: fraction,
+  states: fraction,
+  ended: z.int().nullable().describe('The first cycle that has ended before they meet, from 0'),
+});
 
 export const divisionBody = z.strictObject({ whole: exact, ratios: list, unit: exact.default('1') });
 export const divisionResponse = z.object({ parts: z.array(z.object({ exact: fraction, rounded: fraction, error: fraction })) });

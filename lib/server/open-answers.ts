@@ -1,6 +1,6 @@
 import 'server-only';
 import {
-  EngineError, applySteps, attacks, canonEntries, checkAnswer, checkLadder, cyclesOf, divide, findTransformations, formatFraction as f, formatRhythm, ladder, measuresOf,
+  EngineError, applySteps, attacks, canonEntries, checkAnswer, checkLadder, divide, findTransformations, formatFraction as f, formatRhythm, ladder, measuresOf, meetingOf,
   nearestTransformation, parseMetre, parseRhythm, pivotFor, proportionName, roundParts, secondsOf, stretchedMetre, tempoChain, toFactor, toFraction, totalLength,
 } from '@/engine';
 import type { OpenBody, OpenResponse, OpenRoute } from '../schemas/open';
@@ -54,8 +54,8 @@ export const OPEN_ANSWERS: { readonly [K in OpenRoute]: (body: OpenBody<K>) => O
   },
   tempo: ({ tempo, pivots }) => ({ tempos: tempoChain(tempo, pivots).map(({ perMinute, factor, metronome, off }) => ({ perMinute: f(perMinute), factor: f(factor), metronome: f(metronome), off: f(off) })) }),
   alignment({ cycles }) {
-    const { meet, turns, pulse, states } = cyclesOf(cycles);
-    return { meet: f(meet), turns: turns.map(f), pulse: f(pulse), states: f(states) };
+    const { at, turns, period, pulse, states, ended } = meetingOf(cycles.map((cycle) => (typeof cycle === 'string' ? { length: cycle } : cycle)));
+    return { meet: at && f(at), turns: turns.map(f), period: f(period), pulse: f(pulse), states: f(states), ended };
   },
   division: ({ whole, ratios, unit }) => ({ parts: roundParts(divide(whole, ratios), unit).map(({ exact, rounded, error }) => ({ exact: f(exact), rounded: f(rounded), error: f(error) })) }),
   canon: ({ length, speeds, meet }) => ({ voices: canonEntries(length, speeds, meet).map(({ speed, length: own, delay, end }) => ({ speed: f(speed), length: f(own), delay: f(delay), end: f(end) })) }),

@@ -57,6 +57,12 @@ test('by attacks, and a measure that does not add up', async ({ page }) => {
   await expect(verdict(page).getByRole('status')).toContainText('Measure 1 lasts 1/2; in 4/4 it should last 1.');
 });
 
+test('marks value by value', async ({ page }) => {
+  await page.goto(address('1/4 1/8 1/8 1/2', [by('2')], '1/2 1/4 3/8 1'));
+  await page.getByText('Marks value by value').click();
+  await expect(page.getByRole('row')).toHaveText(['ValueShould beYoursMark', '11/21/2right, 1 mark', '21/41/4right, 1 mark', '31/43/8wrong length', '411right, 1 mark']);
+});
+
 test('the wrong place stands out on the staff', async ({ page }) => {
   await page.goto(address('1/4 1/8 1/8 1/2', [by('2')], '1/2 1/4 3/8 1'));
   const wrong = page.getByTestId('rhythm-staff').nth(1).locator('[data-origin].wrong');

@@ -47,6 +47,10 @@ const CASES: readonly (readonly [source: string, heading: string, values: Record
   ['13.5: 8 and 9 after 72', 'Alignment', { cycles: '8, 9' }, '72', '72 states'],
   ['13.5: 6 and 9 after 18', 'Alignment', { cycles: '6, 9' }, '18', 'In steps of 3 there are 6 states'],
   ['Machaut, M4: colour 18, talea 12 (bestmusicteacher.com)', 'Alignment', { cycles: '18, 12' }, '36', 'In steps of 6 there are 6 states'],
+  ['Sunzi suanjing, III, 26, from memory: 2 by threes, 3 by fives, 2 by sevens', 'Alignment', { cycles: '3 from 2, 5 from 3, 7 from 2' }, '23', 'In steps of 1 there are 105 states'],
+  ['entries with nothing in common never meet', 'Alignment', { cycles: '4, 6 from 1' }, 'never', 'they never begin a turn together'],
+  ['a cycle that turns too seldom has ended', 'Alignment', { cycles: '3 x2, 4' }, '12', 'Cycle 1 has ended by then: it turns 2 times only.'],
+  ['named the other way: sesquialtera is 3/2', 'Lengths', { lengths: '4, 6, 9', claim: 'sesquialtera' }, '4 + 6 + 9 = 19', 'Yes: each is half as long again.'],
   // division
   ['13.1, Lendvai’s tradition: 443 measures, 274', 'Division', { whole: '443', way: 'golden' }, '274 + 169 = 443', 'is no fraction'],
   ['13.1, Lendvai’s tradition: 93 measures, 57', 'Division', { whole: '93', way: 'golden' }, '57 + 36 = 93', 'is no fraction'],

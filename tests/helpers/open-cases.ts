@@ -10,6 +10,7 @@ export const CASES_OF_CHECK: readonly (readonly [source: string, path: string, b
   ['T3: 4 6 8 12 are no equal steps', '/api/proportions/lengths', { lengths: ['4', '6', '8', '12'], claim: '150%' }, { total: '30', equalSteps: false, claim: { holds: false, step: 1, run: ['4', '6', '9', '27/2'] } }],
   ['Winold, 1975: 84 to 126', '/api/proportions/tempo', { tempo: { beat: '1/4', perMinute: '84' }, pivots: [{ before: '1/3', after: '1/2' }] }, { tempos: [{ perMinute: '84' }, { perMinute: '126' }] }],
   ['13.5: 8 and 9 meet after 72', '/api/proportions/alignment', { cycles: ['8', '9'] }, { meet: '72', turns: ['9', '8'] }],
+  ['Sunzi suanjing, III, 26, from memory: 23', '/api/proportions/alignment', { cycles: [{ length: '3', entry: '2' }, { length: '5', entry: '3' }, { length: '7', entry: '2', repeats: 2 }] }, { meet: '23', ended: 2, period: '105' }],
   ['Lendvai, from memory: 89 is 55 and 34', '/api/proportions/division', { whole: '89', ratios: ['55', '34'] }, { parts: [{ exact: '55' }, { exact: '34' }] }],
   ['Polansky: 2:3 enters at 1/3 of the whole', '/api/proportions/canon', { length: '3', speeds: ['1', '3/2'] }, { voices: [{ delay: '0' }, { delay: '1', length: '2' }] }],
   ['4/3 of 4/4 is no metre', '/api/proportions/stretch', { measures: '6', metre: '4/4', tempo: { beat: '1/4', perMinute: '60' }, factor: '4/3' }, { measures: '8', seconds: '32', name: 'sesquitertia', writing: { metre: null } }],

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { canonEntries, cyclesOf, divide, fibonacci, formatFraction, proportionName, proportionOf, roundParts, tempoChain, toFraction } from '@/engine';
+import { canonEntries, divide, fibonacci, formatFraction, meetingOf, proportionName, proportionOf, roundParts, tempoChain, toFraction } from '@/engine';
 
 const f = formatFraction;
 
@@ -53,9 +53,37 @@ describe('cycles (check values 13.5; openknowledgegraph.com, polymeter)', () => 
   it.each([
     [['3', '4'], '12', ['4', '3'], '12'], [['3', '5'], '15', ['5', '3'], '15'], [['6', '9'], '18', ['3', '2'], '6'], [['8', '9'], '72', ['9', '8'], '72'],
     [['3/4', '5/8', '1'], '15', ['20', '24', '15'], '120'],
-  ])('%j meet after %s', (lengths, meet, turns, states) => {
-    const cycles = cyclesOf(lengths);
-    expect([f(cycles.meet), cycles.turns.map(f), f(cycles.states)]).toEqual([meet, turns, states]);
+  ])('%j meet after %s', (lengths, meet, wantedTurns, wantedStates) => {
+    const { at, turns, states } = meetingOf(lengths.map((length) => ({ length })));
+    expect([at && f(at), turns.map(f), f(states)]).toEqual([meet, wantedTurns, wantedStates]);
+  });
+});
+
+describe('cycles that enter at moments of their own', () => {
+  const meet = (cycles: Parameters<typeof meetingOf>[0]) => {
+    const { at, turns, ended } = meetingOf(cycles);
+    return [at && f(at), turns.map(f), ended];
+  };
+  it('begun together they meet as ever (13.5: 3 and 4 after 12)', () => expect(meet([{ length: '3' }, { length: '4' }])).toEqual(['12', ['4', '3'], null]));
+  it('Sun Zi’s question (Sunzi suanjing, III, 26, from memory): 2 over by threes, 3 by fives, 2 by sevens is 23', () => {
+    expect(meet([{ length: 3, entry: 2 }, { length: 5, entry: 3 }, { length: 7, entry: 2 }])).toEqual(['23', ['7', '4', '3'], null]);
+  });
+  it('never, where their entries have nothing in common', () => expect(meet([{ length: 4 }, { length: 6, entry: 1 }])).toEqual([null, [], null]));
+  it('not before the last has entered; and one that turns too seldom has ended by then', () => {
+    expect(meet([{ length: '1/2' }, { length: '3/4', entry: '5/4' }])).toEqual(['2', ['4', '1'], null]);
+    expect(meet([{ length: '1/2', repeats: 3 }, { length: '3/4', entry: '5/4' }])).toEqual(['2', ['4', '1'], 0]);
+  });
+  it('law: at the meeting every cycle has turned a whole number of times, and at no pulse before', () => {
+    fc.assert(
+      fc.property(fc.array(fc.record({ length: fc.integer({ min: 1, max: 12 }), entry: fc.integer({ min: 0, max: 15 }) }), { minLength: 1, maxLength: 4 }), (cycles) => {
+        const { at } = meetingOf(cycles);
+        const latest = Math.max(...cycles.map(({ entry }) => entry));
+        const isMeeting = (time: number) => cycles.every(({ length, entry }) => (time - entry) % length === 0);
+        const first = latest === 0 ? 1 : latest;
+        const brute = Array.from({ length: 30_000 }, (_, n) => first + n).find(isMeeting);
+        expect(at === null ? undefined : Number(at.n)).toBe(brute);
+      }),
+    );
   });
 });
 
