@@ -26,6 +26,7 @@ export type EngineErrorCode =
   | 'unknown_subject'
   | 'unknown_instrument'
   | 'unknown_section'
+  | 'unknown_player'
   | 'unknown_process'
   /** a section that mirrors itself, directly or by way of others */
   | 'mirror_ring'

@@ -73,6 +73,10 @@ export { compareWritings, legibilityOf, legibilityWords, type Legibility, type W
 export { scoreOf, type Score, type Staff } from './views/score';
 export { playEvents } from './views/play-events';
 export { endWords, statementEnds, type StatementEnd } from './views/statement-ends';
+export { printScore } from './print/print-score';
+export { restRuns, type RestRun } from './print/rest-runs';
+export { dynamicsOf, readDynamics, reversedDynamics, sectionDynamics, type Dynamic } from './print/dynamics';
+export type { Cue, InstrumentChange, PrintCell, PrintGroup, PrintMeasure, PrintNote, PrintScore, PrintStaff, StaffDynamic, StaffPlace } from './print/types';
 export { threadsOf, type Thread, type ThreadReading, type ThreadRow, type ThreadTick, type Threads } from './views/threads';
 
 export {

@@ -40,6 +40,8 @@ export const LIMITS = {
   metreUnit: 64,
   /** the shortest symbol that is written */
   shortestSymbol: 256,
+  /** marks on the attacks of one rhythm */
+  marks: 1_024,
   /** sound numbers of one instrument */
   sounds: 12,
   /** length of a title or a name */

@@ -9,6 +9,8 @@ export type Value = {
   readonly roll?: true;
   /** number of the sound on an instrument that has several, 1 the lowest */
   readonly sound?: number;
+  /** how the attack ends where it does not just end; a study says so, rhythm text does not */
+  readonly ends?: 'let-ring' | 'choke';
 };
 
 /** Values one after another. */

@@ -53,11 +53,12 @@ function checkMetresAndTempos(study: Study): void {
 }
 
 /** A value without its trace. */
-function untraced({ length, rest, accent, roll, sound }: Value): Value {
+function untraced({ length, rest, accent, roll, sound, ends }: Value): Value {
   const value: { -readonly [K in keyof Value]: Value[K] } = { length, rest };
   if (accent !== undefined) value.accent = accent;
   if (roll !== undefined) value.roll = roll;
   if (sound !== undefined) value.sound = sound;
+  if (ends !== undefined) value.ends = ends;
   return value;
 }
 

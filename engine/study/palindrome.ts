@@ -76,7 +76,8 @@ const isSame = (a: Run, b: Run): boolean =>
   a.value.rest === b.value.rest &&
   a.value.accent === b.value.accent &&
   a.value.roll === b.value.roll &&
-  a.value.sound === b.value.sound;
+  a.value.sound === b.value.sound &&
+  a.value.ends === b.value.ends;
 
 type Place = (position: Fraction) => string;
 type Named = { readonly line: Line; readonly name: string };

@@ -8,7 +8,12 @@ import { exactText, id, metreText, name, rhythmText, stepsSchema, tempoSchema } 
 const schemas = Object.values(PROCESSES).map(({ schema }) => schema);
 export const processSchema = z.discriminatedUnion('kind', schemas as [(typeof schemas)[number], ...typeof schemas]);
 
-const lineSchema = z.strictObject({ instrument: id, rhythm: rhythmText });
+/** How an attack ends, where it does not just end: it goes wherever the attack goes. Attacks are counted from 0. */
+const marksSchema = z.array(z.strictObject({ attack: z.int().min(0).max(LIMITS.rhythmValues), ends: z.enum(['let-ring', 'choke']) })).max(LIMITS.marks);
+/** Levels and hairpins, such as `p < f > mp`, or words. */
+const dynamics = z.string().max(LIMITS.name);
+
+const lineSchema = z.strictObject({ instrument: id, rhythm: rhythmText, marks: marksSchema.optional(), dynamics: dynamics.optional() });
 
 const sectionCommon = {
   id,
@@ -18,7 +23,9 @@ const sectionCommon = {
   tempo: tempoSchema.optional(),
   writing: z.enum(['values', 'tempo', 'metre']).optional(),
   under: z.array(lineSchema).max(LIMITS.lines).optional(),
-  dynamics: z.string().max(LIMITS.name).optional(),
+  dynamics: dynamics.optional(),
+  /** whether everybody holds its end */
+  fermata: z.literal(true).optional(),
 };
 
 const processSectionSchema = z.strictObject({
@@ -28,6 +35,8 @@ const processSectionSchema = z.strictObject({
   process: processSchema,
   instruments: z.array(id).max(LIMITS.instruments),
   before: stepsSchema.optional(),
+  /** one a statement, repeated in turn, in place of the section's; an empty one leaves the section's */
+  statementDynamics: z.array(dynamics).max(LIMITS.statements).optional(),
 });
 const freeSectionSchema = z.strictObject({
   ...sectionCommon,
@@ -50,10 +59,13 @@ export const sectionSchema = z.discriminatedUnion('kind', [processSectionSchema,
 export const studySchema = z.strictObject({
   format: z.literal(1).default(1),
   title: name,
+  composer: z.string().trim().max(LIMITS.name).optional(),
+  /** the line that the composer chooses to state their rights with; the program states none */
+  rights: z.string().trim().max(LIMITS.name).optional(),
   metre: metreText,
   tempo: tempoSchema,
   pickup: exactText.optional(),
-  subjects: z.array(z.strictObject({ id, name, rhythm: rhythmText })).max(LIMITS.subjects).default([]),
+  subjects: z.array(z.strictObject({ id, name, rhythm: rhythmText, marks: marksSchema.optional() })).max(LIMITS.subjects).default([]),
   instruments: z
     .array(
       z.strictObject({

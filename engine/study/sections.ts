@@ -4,11 +4,11 @@ import { LIMITS } from '../limits';
 import { rulesOf } from '../process/registry';
 import type { Placed, TracedValue } from '../process/types';
 import { parseRhythm } from '../rhythm/parse';
-import type { Rhythm } from '../rhythm/types';
 import { retrograde } from '../transform/retrograde';
 import { applySteps } from '../transform/steps';
 import { locate } from './locate';
-import type { MirrorSection, ProcessSection, Section, Study } from './schema';
+import { marked } from './marks';
+import type { FreeSection, MirrorSection, ProcessSection, Section, Study } from './schema';
 
 /** What a section plays, before it is placed in the study. */
 export type SectionContent = { readonly placed: readonly Placed[]; readonly length: Fraction };
@@ -74,7 +74,7 @@ export class SectionBuilder {
     if (traced === undefined) {
       const rhythm = locate({ path: `subjects.${index}.rhythm` }, () => parseRhythm(subject.rhythm));
       let attack = 0;
-      traced = rhythm.map((value) => ({ ...value, origin: value.rest ? null : attack++ }));
+      traced = marked(rhythm, subject.marks).map((value) => ({ ...value, origin: value.rest ? null : attack++ }));
       this.subjects.set(id, traced);
     }
     return traced;
@@ -106,9 +106,9 @@ export class SectionBuilder {
     return rules.statements(context);
   }
 
-  private line(section: string, line: { instrument: string; rhythm: string }, path: string): Placed {
+  private line(section: string, line: FreeSection['lines'][number], path: string): Placed {
     if (!this.instruments.has(line.instrument)) throw unknownInstrument(line.instrument, { section, path: `${path}.instrument` });
-    const rhythm: Rhythm = locate({ path: `${path}.rhythm` }, () => parseRhythm(line.rhythm));
+    const rhythm = marked(locate({ path: `${path}.rhythm` }, () => parseRhythm(line.rhythm)), line.marks);
     this.reserve(rhythm.length);
     const length = sum(rhythm.map((v) => v.length));
     return {

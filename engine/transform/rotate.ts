@@ -17,7 +17,7 @@ function turn<T>(items: readonly T[], steps: number): T[] {
 /** A value as a rest, which keeps whatever else travels with it but its marks. */
 export function silenced<T extends Value>(value: T, length = value.length): T {
   const rest: T = { ...value, length, rest: true };
-  for (const mark of ['accent', 'roll', 'sound'] as const) delete (rest as { -readonly [K in keyof T]?: T[K] })[mark];
+  for (const mark of ['accent', 'roll', 'sound', 'ends'] as const) delete (rest as { -readonly [K in keyof T]?: T[K] })[mark];
   return rest;
 }
 

@@ -36,6 +36,7 @@ export function playEvents(study: Study, built: BuiltStudy): PlayEvent[] {
             ...(value.accent === undefined ? {} : { accent: value.accent }),
             ...(value.roll === undefined ? {} : { roll: value.roll }),
             ...(value.sound === undefined ? {} : { sound: value.sound }),
+            ...(value.ends === undefined ? {} : { ends: value.ends }),
             statement: statement.id,
             value: index,
             origin: statement.origins[index] ?? null,

@@ -22,7 +22,7 @@ function looks({ measures, values }: Staff, index: number): string {
   return measure.symbols
     .map(({ base, dots, rest, tuplets, tiedFromBefore, tiedOn, value }) => {
       const own = value === null ? undefined : values[value];
-      const marks = tiedFromBefore ? '' : [own?.accent ?? '', own?.roll ?? ''].join();
+      const marks = tiedFromBefore ? '' : [own?.accent ?? '', own?.roll ?? '', own?.ends ?? ''].join();
       return [base, dots, rest, tuplets.map(({ actual, normal, starts, stops }) => `${actual}:${normal}${starts ?? ''}${stops ?? ''}`).join(' '), tiedFromBefore, tiedOn, rest ? '' : (own?.sound ?? 1), marks].join();
     })
     .join(';');

@@ -12,6 +12,8 @@ export type PlayEvent = {
   readonly accent?: 'accent' | 'strong';
   readonly roll?: true;
   readonly sound?: number;
+  /** rings on after its length, or is stopped at its end */
+  readonly ends?: 'let-ring' | 'choke';
   /** id of its statement */
   readonly statement: string;
   /** index of its value in the statement's rhythm */
