@@ -6,12 +6,16 @@ import typescript from 'eslint-config-next/typescript';
 
 const root = path.resolve(path.dirname(fileURLToPath(import.meta.url)), '..');
 
-/** The arrows of the house: engine ← db ← lib/server ← app, and engine ← lib/schemas ← lib/client ← components ← app. */
+/**
+ * The arrows of the house: engine ← db ← lib/server ← app, and engine ← lib/schemas ← lib/client ← components ← app; engine ←
+ * lib/engraving, which both sides may use.
+ */
 const zones = [
   { target: './engine', from: ['./app', './components', './db', './lib'] },
   { target: './db', from: ['./app', './components', './lib'] },
   { target: './lib', from: ['./app', './components'] },
-  { target: ['./lib/schemas', './lib/client'], from: ['./lib/server', './db'] },
+  { target: ['./lib/schemas', './lib/client', './lib/engraving'], from: ['./lib/server', './db'] },
+  { target: './lib/engraving', from: ['./lib/client', './lib/schemas'] },
   { target: './components', from: ['./app', './db', './lib/server'] },
 ];
 

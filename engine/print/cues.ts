@@ -29,7 +29,7 @@ export function cuesFor(staff: Pick<PrintStaff, 'isSilent'>, others: readonly St
       .filter(({ attacks, other }) => attacks > 0 && !isSilent(other, index - 1))
       .toSorted((a, b) => b.attacks - a.attacks);
     if (best === undefined) continue;
-    cues.push({ first, length: CUES.length, instrument: best.other.instrument.id, cells: Array.from({ length: CUES.length }, (_, n) => cellOf(best.other, first + n, false)) });
+    cues.push({ first, length: CUES.length, instrument: best.other.instrument.id, name: best.other.instrument.name, cells: Array.from({ length: CUES.length }, (_, n) => cellOf(best.other, first + n, false)) });
   }
   return cues;
 }

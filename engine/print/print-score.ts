@@ -84,7 +84,7 @@ function staffOf(sources: Sources, id: string, lane: readonly Staff[]): PrintSta
   const statements = own.map((one) => byId.get(one)!).toSorted((a, b) => a.start.compare(b.start));
   return {
     id,
-    instruments: lane.map(({ instrument }) => instrument),
+    instruments: lane.map(({ instrument, values }) => ({ ...instrument, sounds: instrument.sounds ?? values.reduce((most, { sound }) => Math.max(most, sound ?? 1), 1) })),
     cell: remembered((index) => cellOf(who(index), index, held.has(index))),
     isSilent: remembered((index) => isSilent(who(index), index)),
     dynamics: staffDynamics(statements, instruments, dynamics, score.measures),
@@ -140,6 +140,7 @@ export function printScore(study: Study, built: BuiltStudy, { part }: { part?: s
     title: study.title,
     composer: study.composer || null,
     rights: study.rights || null,
+    players: study.players,
     part: player === null ? null : { id: player.id, name: player.name },
     measures,
     printed,

@@ -54,11 +54,11 @@ export type InstrumentChange = {
 };
 
 /** What somebody else plays, in small notes, at the end of a long rest. */
-export type Cue = { readonly first: number; readonly length: number; readonly instrument: string; readonly cells: readonly PrintCell[] };
+export type Cue = { readonly first: number; readonly length: number; readonly instrument: string; readonly name: string; readonly cells: readonly PrintCell[] };
 
 export type PrintStaff = {
   readonly id: string;
-  /** the instruments it is for, in the study's order */
+  /** the instruments it is for, in the study's order, each with the number of its sounds */
   readonly instruments: readonly Instrument[];
   /** one of its measures, by index; worked out when it is asked for */
   readonly cell: (measure: number) => PrintCell;
@@ -91,6 +91,8 @@ export type PrintScore = {
   readonly title: string;
   readonly composer: string | null;
   readonly rights: string | null;
+  /** everybody, and what they play */
+  readonly players: readonly { readonly id: string; readonly name: string; readonly instruments: readonly string[] }[];
   /** the player whose part it is; null for the score */
   readonly part: { readonly id: string; readonly name: string } | null;
   /** every measure of the piece, those that a repeat leaves out too */

@@ -1,0 +1,51 @@
+import type { PrintCell, PrintNote, PrintStaff } from '@/engine';
+import { lineReach, staffShape, stepsOf } from './shape';
+
+/** Drawing units, ten a staff space: how far a row reaches above and below its middle line. */
+export type Reach = { readonly above: number; readonly below: number };
+
+const FIVE_LINES = 22;
+/** The number over measures of rest. */
+export const RUN_ABOVE = 46;
+const STEM = 36;
+/** Stems grow by so much for each beam or flag beyond the second. */
+const LEVEL = 9;
+const ACCENT = { accent: 13, strong: 17 } as const;
+const FERMATA = 24;
+const BRACKET = 24;
+const INNER = 17;
+const CHOKE = 20;
+
+function noteAbove({ symbol, accent, fermata, ends }: PrintNote, steps: number): number {
+  const isStemmed = !symbol.rest && symbol.base !== '1' && symbol.base !== '2';
+  const levels = symbol.rest ? 0 : Math.max(0, Math.log2(Number(symbol.base.split('/')[1] ?? 1)) - 4);
+  const head = symbol.rest ? 16 : steps * 5 + (isStemmed ? 6 : 16);
+  const stem = isStemmed ? steps * 5 + STEM + levels * LEVEL : 0;
+  return Math.max(head, stem) + (accent === undefined ? 0 : ACCENT[accent]) + (fermata ? FERMATA : 0) + (ends === 'choke' ? CHOKE : 0);
+}
+
+/** How far a measure reaches, everything about its notes counted. */
+export function cellReach({ notes, silent }: PrintCell, sounds: number): Reach {
+  const shape = staffShape(sounds);
+  const lines = lineReach(shape);
+  // Bar lines and signatures stand as tall as five lines on every staff.
+  if (silent) return { above: FIVE_LINES + (notes.some(({ fermata }) => fermata) ? FERMATA : 0), below: FIVE_LINES };
+  let above: number = FIVE_LINES;
+  let below = Math.max(FIVE_LINES, lines.below + 4);
+  let nesting = 0;
+  for (const note of notes) {
+    const steps = note.symbol.rest ? 0 : stepsOf(shape.keys[Math.min(note.sound - 1, shape.keys.length - 1)]!);
+    above = Math.max(above, noteAbove(note, steps));
+    below = Math.max(below, (note.symbol.rest ? 18 : 8) - steps * 5);
+    nesting = Math.max(nesting, note.symbol.tuplets.length);
+  }
+  return { above: above + (nesting > 0 ? BRACKET + (nesting - 1) * INNER : 0), below };
+}
+
+/** How many sounds an instrument is drawn with. */
+export const soundsOf = (staff: PrintStaff, instrument: string): number => staff.instruments.find(({ id }) => id === instrument)?.sounds ?? 1;
+
+/** From the lowest thing of a row down to the baseline of its dynamics, and on to their lower edge. */
+export const DYNAMICS = { baseline: 15, room: 24 } as const;
+/** Over a row, where a change of instrument or a cue is named. */
+export const NAMED = 16;
