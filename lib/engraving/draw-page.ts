@@ -4,8 +4,16 @@ import type { VexFlow } from './notes';
 import type { PageOptions } from './page-options';
 import { BODY_TEXT, FOOT_TEXT, NAME_TEXT } from './page-text';
 import type { Layout, Page } from './pages';
-import { addText } from './text';
+import { addText, textWidth } from './text';
 import { wrap } from './front-matter';
+
+/** A title cut to a width, with an ellipsis where it is. */
+function shortened(vf: VexFlow, text: string, width: number): string {
+  if (textWidth(vf, text, FOOT_TEXT) <= width) return text;
+  let end = text.length;
+  while (end > 1 && textWidth(vf, `${text.slice(0, end)}…`, FOOT_TEXT) > width) end -= 1;
+  return `${text.slice(0, end).trimEnd()}…`;
+}
 
 /** Names of instruments beside their staves, on one line or two. */
 function drawNames(vf: VexFlow, group: Element, score: PrintScore, { system, x, y }: Page['systems'][number], names: number): void {
@@ -43,7 +51,8 @@ export function drawPage(vf: VexFlow, host: HTMLDivElement, score: PrintScore, l
   const { left, right, bottom } = geometry;
   const foot = bottom + 26;
   const isMusic = page.systems.length > 0;
-  const running = [score.title, ...(score.part === null ? [] : [score.part.name])].join(', ');
+  const beside = score.part === null ? '' : `, ${score.part.name}`;
+  const running = `${shortened(vf, score.title, (right - left) * 0.34 - textWidth(vf, beside, FOOT_TEXT))}${beside}`;
   if (score.rights !== null && (page.number === 1 || (isMusic && pages[page.number - 2]?.systems.length === 0))) addText(svg, (left + right) / 2, foot - 15, score.rights, { ...FOOT_TEXT, anchor: 'middle' });
   addText(svg, left, foot, running, FOOT_TEXT);
   if (options.stamp !== undefined) addText(svg, (left + right) / 2, foot, options.stamp, { ...FOOT_TEXT, anchor: 'middle' });

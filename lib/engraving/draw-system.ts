@@ -31,6 +31,9 @@ export type DrawnSystem = {
   readonly tuplets: readonly Vex.Tuplet[];
 };
 
+/** “Damp” (SMuFL 1.4, percussion playing techniques, U+E7F9). */
+const CHOKE = '\uE7F9';
+
 type Spot = { readonly x: number; readonly at: number };
 /** For each column, where its moments are, by offset in written whole notes. */
 type Spots = readonly (readonly Spot[])[];
@@ -72,7 +75,7 @@ function drawDynamics(vf: VexFlow, group: Element, score: PrintScore, { columns,
       const width = textWidth(vf, text, style);
       const measure = score.measures[one.place.measure]!;
       const isAtEnd = one.place.offset.equals(measure.length.div(measure.scale));
-      const left = Math.max(x(one.place) - (isAtEnd ? width : one.isMark ? 3 : 0), spots[0]![0]!.x - 8);
+      const left = Math.min(Math.max(x(one.place) - (isAtEnd ? width : one.isMark ? 3 : 0), spots[0]![0]!.x - 8), spots.at(-1)!.at(-1)!.x + 8 - width);
       addText(group, left, baseline, text, style).setAttribute('data-dynamic', one.text);
       ends.push({ left, right: left + width });
     }
@@ -115,7 +118,7 @@ function drawLinks(vf: VexFlow, context: Vex.RenderContext, group: Element, note
     }
     if (ends === 'choke') {
       const top = one.note.hasStem() ? one.note.getStemExtents().topY : headY - 6;
-      addText(group, one.note.getAbsoluteX() + 6, top - (one.from.accent ? 20 : 5), '\uE805', { size: 40, isMusic: true, anchor: 'middle' }).setAttribute('data-choke', '');
+      addText(group, one.note.getAbsoluteX() + 6, top - (one.from.accent ? 20 : 5), CHOKE, { size: 40, isMusic: true, anchor: 'middle' }).setAttribute('data-choke', '');
     }
     previous = one;
   }

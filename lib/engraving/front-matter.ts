@@ -2,9 +2,8 @@ import { type Instrument, type PrintNote, type PrintScore, formatClock } from '@
 import type { VexFlow } from './notes';
 import type { PageGeometry } from './page-options';
 import { BODY_TEXT, COMPOSER_TEXT, HEADING_TEXT, TITLE_TEXT } from './page-text';
-import { staffShape } from './shape';
+import { lineReach, staffShape, stepsOf } from './shape';
 import { type TextStyle, addText, textWidth } from './text';
-import { lineReach } from './shape';
 
 /** A piece of front matter: how tall it is, and how it is drawn at a height. */
 export type FrontBlock = { readonly height: number; readonly draw: (group: Element, context: import('vexflow/bravura').RenderContext, y: number) => void };
@@ -56,7 +55,7 @@ const space = (height: number): FrontBlock => ({ height, draw: () => undefined }
 function keyBlock(vf: VexFlow, { name, sounds = 1 }: Pick<Instrument, 'name' | 'sounds'>, { left }: PageGeometry): FrontBlock {
   const shape = staffShape(sounds);
   const above = Math.max(lineReach(shape).above, 20) + 24;
-  const below = Math.max(lineReach(shape).below, 14) + 16;
+  const below = Math.max(lineReach(shape).below, 14, 8 - 5 * stepsOf(shape.keys[0]!)) + 16;
   return {
     height: above + below,
     draw: (group, context, y) => {
@@ -79,7 +78,7 @@ type Sign = { readonly words: string; readonly isUsed: (note: PrintNote) => bool
 const SIGNS: readonly Sign[] = [
   { words: 'Three slashes through the stem: a roll for the whole length of the note.', isUsed: ({ roll }) => roll === true },
   { words: 'A short curve that leads to nothing: let it ring.', isUsed: ({ ends }) => ends === 'let-ring' },
-  { words: 'A cross in a circle over a note: stop the sound at the end of its length.', isUsed: ({ ends }) => ends === 'choke' },
+  { words: 'A circle with a cross over a note: stop the sound at the end of its length.', isUsed: ({ ends }) => ends === 'choke' },
   { words: 'An open wedge is an accent, an upright one a strong accent.', isUsed: ({ accent }) => accent !== undefined },
 ];
 
@@ -146,6 +145,8 @@ export function frontBlocks(vf: VexFlow, score: PrintScore, geometry: PageGeomet
     ...several.map((instrument) => keyBlock(vf, instrument, geometry)),
     ...(signs.length === 0 ? [] : heading('Signs')),
     ...signs.flatMap((sign) => lines(vf, sign, BODY_TEXT, geometry, { after: 3 })),
+    ...(score.failures.length === 0 ? [] : heading('Not in this score')),
+    ...score.failures.flatMap(({ instrument, error }) => lines(vf, `${instrument.name}: ${error.message}`, BODY_TEXT, geometry, { after: 3 })),
     ...heading('Hearing'),
     ...lines(vf, CAUTION, BODY_TEXT, geometry),
   ];

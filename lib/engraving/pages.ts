@@ -81,6 +81,7 @@ export function layOutPages(vf: VexFlow, score: PrintScore, options: PageOptions
   const starts = isPart ? breakForTurns(systems.length, (first, end) => fits(first, end, first === 0 ? headEnd : geometry.top), turnAt, before) : breakBest(systems.length, (first, end) => waste(fits(first, end, geometry.top), geometry, end === systems.length));
   const pages: Page[] = front.slice(0, before).map((placed, index) => ({ number: index + 1, front: placed, systems: [], hurries: false }));
   const remarks = tooWide.map((number) => `Measure ${number} needs more room than the page has: it is pressed together. Choose smaller staves or the long side of the paper.`);
+  remarks.push(...score.failures.map(({ instrument, error }) => `${instrument.name} is not printed. ${error.message}`));
   if (systems.length === 0) pages.push({ number: pages.length + 1, front: head, systems: [], hurries: false });
   starts.forEach((first, n) => {
     const end = starts[n + 1] ?? systems.length;

@@ -16,12 +16,28 @@ const BRACKET = 24;
 const INNER = 17;
 const CHOKE = 20;
 
-function noteAbove({ symbol, accent, fermata, ends }: PrintNote, steps: number): number {
-  const isStemmed = !symbol.rest && symbol.base !== '1' && symbol.base !== '2';
-  const levels = symbol.rest ? 0 : Math.max(0, Math.log2(Number(symbol.base.split('/')[1] ?? 1)) - 4);
-  const head = symbol.rest ? 16 : steps * 5 + (isStemmed ? 6 : 16);
-  const stem = isStemmed ? steps * 5 + STEM + levels * LEVEL : 0;
-  return Math.max(head, stem) + (accent === undefined ? 0 : ACCENT[accent]) + (fermata ? FERMATA : 0) + (ends === 'choke' ? CHOKE : 0);
+/** From the middle line to the top of a note's head or stem. */
+function stemTop({ symbol }: PrintNote, steps: number): number {
+  if (symbol.rest) return 16;
+  if (symbol.base === '1' || symbol.base === '2') return steps * 5 + 16;
+  const levels = Math.max(0, Math.log2(Number(symbol.base.split('/')[1] ?? 1)) - 4);
+  return steps * 5 + STEM + levels * LEVEL;
+}
+
+const over = ({ accent, fermata, ends }: PrintNote): number => (accent === undefined ? 0 : ACCENT[accent]) + (fermata ? FERMATA : 0) + (ends === 'choke' ? CHOKE : 0);
+
+/** The tops of notes: under one beam, all stems reach as high as the highest. */
+function tops(notes: readonly PrintNote[], stepsAt: (note: PrintNote) => number): number[] {
+  const found = notes.map((note) => stemTop(note, stepsAt(note)));
+  let first: number | null = null;
+  notes.forEach(({ symbol }, index) => {
+    if (symbol.beams[0] === 'begin') first = index;
+    if (symbol.beams[0] !== 'end' || first === null) return;
+    const highest = Math.max(...found.slice(first, index + 1));
+    found.fill(highest, first, index + 1);
+    first = null;
+  });
+  return found;
 }
 
 /** How far a measure reaches, everything about its notes counted. */
@@ -33,12 +49,13 @@ export function cellReach({ notes, silent }: PrintCell, sounds: number): Reach {
   let above: number = FIVE_LINES;
   let below = Math.max(FIVE_LINES, lines.below + 4);
   let nesting = 0;
-  for (const note of notes) {
-    const steps = note.symbol.rest ? 0 : stepsOf(shape.keys[Math.min(note.sound - 1, shape.keys.length - 1)]!);
-    above = Math.max(above, noteAbove(note, steps));
-    below = Math.max(below, (note.symbol.rest ? 18 : 8) - steps * 5);
+  const stepsAt = ({ symbol, sound }: PrintNote): number => (symbol.rest ? 0 : stepsOf(shape.keys[Math.min(sound - 1, shape.keys.length - 1)]!));
+  const reached = tops(notes, stepsAt);
+  notes.forEach((note, index) => {
+    above = Math.max(above, reached[index]! + over(note));
+    below = Math.max(below, (note.symbol.rest ? 18 : 8) - stepsAt(note) * 5);
     nesting = Math.max(nesting, note.symbol.tuplets.length);
-  }
+  });
   return { above: above + (nesting > 0 ? BRACKET + (nesting - 1) * INNER : 0), below };
 }
 
@@ -48,4 +65,4 @@ export const soundsOf = (staff: PrintStaff, instrument: string): number => staff
 /** From the lowest thing of a row down to the baseline of its dynamics, and on to their lower edge. */
 export const DYNAMICS = { baseline: 15, room: 24 } as const;
 /** Over a row, where a change of instrument or a cue is named. */
-export const NAMED = 16;
+export const NAMED = 18;
