@@ -74,6 +74,7 @@ export { scoreOf, type Score, type Staff } from './views/score';
 export { playEvents } from './views/play-events';
 export { endWords, statementEnds, type StatementEnd } from './views/statement-ends';
 export { printScore } from './print/print-score';
+export { printRhythm } from './print/print-rhythm';
 export { restRuns, type RestRun } from './print/rest-runs';
 export { dynamicsOf, readDynamics, reversedDynamics, sectionDynamics, type Dynamic } from './print/dynamics';
 export type { Cue, InstrumentChange, PrintCell, PrintGroup, PrintMeasure, PrintNote, PrintScore, PrintStaff, StaffDynamic, StaffPlace } from './print/types';

@@ -1,14 +1,17 @@
-import type { NotationMeasure, NotationSymbol } from '@/engine';
-import type { DrawnScore, DrawnStaff, SystemSpec } from './spec';
+import type { NotationSymbol, PrintCell } from '@/engine';
+import { soundsOf } from '@/lib/engraving/reach';
+import { systemRows } from '@/lib/engraving/system-rows';
+import type { DrawnScore, SystemSpec } from './spec';
 
-/** CSS pixels: what a system begins with, and the room about a staff. */
-export const OPENING = 36;
-export const SIGNATURE = 34;
-export const REPEAT_SIGN = 18;
-/** from one staff to the next where names stand beside them, and where they stand beneath */
-export const STAFF_PITCH = { beside: 80, beneath: 94 } as const;
-export const SYSTEM_TOP = 34;
-export const SYSTEM_GAP = 26;
+/** CSS pixels: what a system begins with. */
+const OPENING = 36;
+const SIGNATURE = 34;
+const REPEAT_SIGN = 18;
+/** Pixels of a letter over the staff, and of the measure's number beside it. */
+const LETTER = 6.4;
+const NUMBER = 34;
+/** under each staff where its name stands beneath it */
+const NAME_BENEATH = 16;
 
 /** Pixels are floating point: from here on, lengths are plain numbers. */
 const pixelLength = ({ base, dots, tuplets }: NotationSymbol): number => {
@@ -18,26 +21,24 @@ const pixelLength = ({ base, dots, tuplets }: NotationSymbol): number => {
 };
 
 /** Where symbols begin within their measure, as plain numbers for the page. */
-export function onsets(measure: NotationMeasure): number[] {
+function onsets({ notes }: PrintCell): number[] {
   let at = 0;
-  return measure.symbols.map((symbol) => {
+  return notes.map(({ symbol }) => {
     const start = at;
     at += pixelLength(symbol);
     return start;
   });
 }
 
-const isSilent = (measure: NotationMeasure): boolean => measure.symbols.every((symbol) => symbol.rest);
-
-/** The room that a measure asks for: every distinct onset of any staff, more for longer gaps. */
-export function measureWidth(score: DrawnScore, index: number): number {
+/** The room that a measure asks for: every distinct onset of any staff, more for longer gaps, and what is said over it. */
+function measureWidth(score: DrawnScore, index: number, words: number): number {
   const planned = score.measures[index]!;
   const starts = new Map<number, number>();
   for (const staff of score.staves) {
-    const measure = staff.measures[index];
-    if (measure === undefined || isSilent(measure)) continue;
-    const at = onsets(measure);
-    measure.symbols.forEach((symbol, n) => {
+    if (staff.isSilent(index)) continue;
+    const cell = staff.cell(index);
+    const at = onsets(cell);
+    cell.notes.forEach(({ symbol }, n) => {
       const key = Math.round(at[n]! * 1e7);
       starts.set(key, Math.max(starts.get(key) ?? 0, symbol.dots * 7 + (symbol.beams.length === 0 && symbol.base.length > 3 && !symbol.rest ? 6 : 0)));
     });
@@ -49,13 +50,18 @@ export function measureWidth(score: DrawnScore, index: number): number {
     return sum + 15 + 7 * Math.log2(1 + 32 * Math.max(gap, 0)) + starts.get(key)!;
   }, 0);
   const signature = planned.signature === null ? 0 : SIGNATURE;
-  const { begins, times, room: above = 0 } = score.signs?.[index] ?? {};
-  return Math.max(times === undefined ? 58 : 96, above, room + 26) + signature + (begins ? REPEAT_SIGN : 0) + (times === undefined ? 0 : REPEAT_SIGN);
+  const { begins, times } = planned;
+  const over = words === 0 ? 0 : NUMBER + words * LETTER;
+  return Math.max(times === undefined ? 58 : 96, over, room + 26) + signature + (begins ? REPEAT_SIGN : 0) + (times === undefined ? 0 : REPEAT_SIGN);
 }
 
-/** Breaks measures into systems that fill the width; a system keeps at least one measure. */
-export function breakSystems(score: DrawnScore, width: number, options: { hideSilent: boolean; pitch: number }): SystemSpec[] {
-  const natural = score.measures.map((_, index) => measureWidth(score, index));
+/**
+ * Breaks measures into systems that fill the width; a system keeps at least one measure.
+ * @param options.words - letters that are said over a measure, by its index
+ */
+export function breakSystems(score: DrawnScore, width: number, options: { hideSilent: boolean; namesBeneath: boolean; words: ReadonlyMap<number, number> }): SystemSpec[] {
+  const natural = score.printed.map((index) => measureWidth(score, index, options.words.get(index) ?? 0));
+  const all = score.staves.map((_, index) => index);
   const systems: SystemSpec[] = [];
   let first = 0;
   while (first < natural.length) {
@@ -69,32 +75,36 @@ export function breakSystems(score: DrawnScore, width: number, options: { hideSi
     const stretch = (width - OPENING) / (room - OPENING);
     const factor = isLast ? Math.min(stretch, 1.35) : stretch;
     const widths = natural.slice(first, end).map((one, index) => one * factor + (index === 0 ? OPENING : 0));
-    const staves = systems.length === 0 || !options.hideSilent ? score.staves : sounding(score.staves, first, end);
-    systems.push({ first, end, widths, staves, pitch: options.pitch, height: SYSTEM_TOP + staves.length * options.pitch + SYSTEM_GAP });
+    const columns = score.printed.slice(first, end).map((measure) => ({ measure, length: 1 }));
+    const heard = systems.length === 0 || !options.hideSilent ? all : all.filter((staff) => columns.some(({ measure }) => !score.staves[staff]!.isSilent(measure)));
+    const rows = systemRows(score, columns, heard.length > 0 ? heard : all.slice(0, 1), { saysTempos: false, beneath: options.namesBeneath ? NAME_BENEATH : 0 });
+    systems.push({ first, end, columns, widths, rows });
     first = end;
   }
   return systems;
 }
 
-function sounding(staves: readonly DrawnStaff[], first: number, end: number): readonly DrawnStaff[] {
-  const heard = staves.filter((staff) => staff.measures.slice(first, end).some((measure) => !isSilent(measure)));
-  return heard.length > 0 ? heard : staves.slice(0, 1);
-}
-
 /** What a system looks like, as text: the same text needs no new drawing. */
-export function signatureOf(spec: SystemSpec, { measures, signs }: Pick<DrawnScore, 'measures' | 'signs'>): string {
-  const parts: string[] = [spec.widths.map((width) => width.toFixed(1)).join()];
-  for (let index = spec.first; index < spec.end; index += 1) parts.push(`${measures[index]!.number}:${measures[index]!.signature ?? ''}:${signs?.[index]?.begins ?? ''}:${signs?.[index]?.times ?? ''}`);
-  for (const staff of spec.staves) {
-    parts.push(`${staff.id}/${staff.name}/${staff.sounds}`);
-    for (const measure of staff.measures.slice(spec.first, spec.end)) {
-      for (const { base, dots, rest, tuplets, tiedFromBefore, tiedOn, beams, value } of measure.symbols) {
-        const own = value === null ? undefined : staff.values[value];
-        const source = value === null ? null : staff.sources[value];
-        parts.push(
-          [base, dots, rest ? 'r' : 'n', tuplets.map((t) => `${t.actual}${t.starts ? '[' : ''}${t.stops ? ']' : ''}`).join('.'), tiedFromBefore, tiedOn, beams.join('.'), own?.accent, own?.roll, own?.sound, source?.statement, source?.origin].join(),
-        );
+export function signatureOf({ columns, widths, rows }: SystemSpec, { measures, staves }: DrawnScore): string {
+  const parts: string[] = [widths.map((width) => width.toFixed(1)).join(), String(measures.length)];
+  const [from, to] = [columns[0]!.measure, columns.at(-1)!.measure];
+  for (const { measure } of columns) {
+    const { number, signature, begins, times } = measures[measure]!;
+    parts.push(`${number}:${signature ?? ''}:${begins ?? ''}:${times ?? ''}`);
+  }
+  for (const { staff: number, middle } of rows.rows) {
+    const staff = staves[number]!;
+    parts.push(`${staff.id}/${middle}`);
+    for (const { measure } of columns) {
+      const { instrument, notes } = staff.cell(measure);
+      parts.push(String(soundsOf(staff, instrument)));
+      for (const { symbol: { base, dots, rest, tuplets, tiedFromBefore, tiedOn, beams }, accent, roll, sound, ends, fermata, statement, origin } of notes) {
+        parts.push([base, dots, rest ? 'r' : 'n', tuplets.map((t) => `${t.actual}${t.starts ? '[' : ''}${t.stops ? ']' : ''}`).join('.'), tiedFromBefore, tiedOn, beams.join('.'), accent, roll, sound, ends, fermata, statement, origin].join());
       }
+    }
+    for (const one of staff.dynamics) {
+      if (one.kind === 'level' && one.place.measure >= from && one.place.measure <= to) parts.push(`${one.text}${one.place.measure}+${one.place.offset.toFraction()}`);
+      if (one.kind === 'hairpin' && one.from.measure <= to && one.to.measure >= from) parts.push(`${one.direction}${one.from.measure}+${one.from.offset.toFraction()}-${one.to.measure}+${one.to.offset.toFraction()}`);
     }
   }
   return parts.join('|');

@@ -3,15 +3,18 @@
 import { type ReactNode, type RefObject, useMemo, useRef } from 'react';
 import { useWidth } from '../study/use-width';
 import type { SystemDrawing } from './draw';
-import { STAFF_PITCH, breakSystems, signatureOf } from './layout';
+import { breakSystems } from './layout';
 import type { DrawnScore, SystemSpec } from './spec';
 import { System } from './system';
+
+const NONE: ReadonlyMap<number, number> = new Map();
 
 /** Music broken into systems that fill the width it is given. */
 export function ScoreLines({
   score,
   hideSilent = false,
   names = true,
+  words = NONE,
   scroller,
   onDrawn,
   children,
@@ -19,6 +22,8 @@ export function ScoreLines({
   score: DrawnScore;
   hideSilent?: boolean;
   names?: boolean;
+  /** how many letters are said over a measure, by its index */
+  words?: ReadonlyMap<number, number>;
   /** the element that scrolls, where it is not the page */
   scroller?: RefObject<HTMLElement | null>;
   onDrawn?: (spec: SystemSpec, drawing: SystemDrawing | null, host: HTMLDivElement) => void;
@@ -29,8 +34,8 @@ export function ScoreLines({
   const width = useWidth(frame);
   const labels = !names || width < 720 ? 0 : 108;
   const systems = useMemo(
-    () => (width === 0 ? [] : breakSystems(score, width - labels - 2, { hideSilent, pitch: names && labels === 0 ? STAFF_PITCH.beneath : STAFF_PITCH.beside })),
-    [score, width, labels, hideSilent, names],
+    () => (width === 0 ? [] : breakSystems(score, width - labels - 2, { hideSilent, namesBeneath: names && labels === 0, words })),
+    [score, width, labels, hideSilent, names, words],
   );
   return (
     <div ref={frame}>
@@ -39,7 +44,6 @@ export function ScoreLines({
           key={spec.first}
           score={score}
           spec={spec}
-          signature={signatureOf(spec, score)}
           labels={labels}
           names={names}
           {...(scroller ? { scroller } : {})}

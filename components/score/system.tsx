@@ -1,10 +1,15 @@
 'use client';
 
-import { type ReactNode, type RefObject, useEffect, useRef, useState } from 'react';
+import { type ReactNode, type RefObject, useEffect, useMemo, useRef, useState } from 'react';
 import { SYSTEM_MARK } from '@/lib/client/study-editor';
-import { type SystemDrawing, drawSystem, loadVexFlow } from './draw';
-import { SYSTEM_TOP } from './layout';
+import { type SystemDrawing, drawOnScreen, loadVexFlow } from './draw';
+import { signatureOf } from './layout';
 import type { DrawnScore, SystemSpec } from './spec';
+
+/** CSS pixels between systems. */
+const GAP = 18;
+
+const nameOf = ({ staves }: DrawnScore, staff: number): string => staves[staff]!.instruments.map(({ name }) => name).join(', ');
 
 /** Whether an element is within a screen or so of being seen. */
 function useNear(host: RefObject<HTMLElement | null>, scroller: RefObject<HTMLElement | null> | undefined): boolean {
@@ -29,7 +34,6 @@ function useNear(host: RefObject<HTMLElement | null>, scroller: RefObject<HTMLEl
 export function System({
   score,
   spec,
-  signature,
   labels,
   names,
   scroller,
@@ -38,8 +42,6 @@ export function System({
 }: {
   score: DrawnScore;
   spec: SystemSpec;
-  /** changes exactly when the drawing must */
-  signature: string;
   /** width of the column of names, 0 where they stand above the staves */
   labels: number;
   names: boolean;
@@ -50,6 +52,8 @@ export function System({
   const root = useRef<HTMLDivElement>(null);
   const host = useRef<HTMLDivElement>(null);
   const isNear = useNear(root, scroller);
+  // Changes exactly when the drawing must.
+  const signature = useMemo(() => (isNear ? signatureOf(spec, score) : ''), [isNear, spec, score]);
   const [drawing, setDrawing] = useState<SystemDrawing | null>(null);
   const latest = useRef({ score, spec, onDrawn });
   useEffect(() => {
@@ -62,7 +66,7 @@ export function System({
     let isCurrent = true;
     void loadVexFlow().then((vexflow) => {
       if (!isCurrent) return;
-      const made = drawSystem(vexflow, element, latest.current.score, latest.current.spec);
+      const made = drawOnScreen(vexflow, element, latest.current.score, latest.current.spec);
       setDrawing(made);
       latest.current.onDrawn?.(made, element);
       performance.mark(SYSTEM_MARK);
@@ -79,23 +83,23 @@ export function System({
   }, [isNear]);
 
   return (
-    <div ref={root} className="relative" style={{ height: spec.height, paddingLeft: labels }} data-testid="system" data-first={spec.first}>
+    <div ref={root} className="relative" style={{ height: spec.rows.height + GAP, paddingLeft: labels }} data-testid="system" data-first={spec.first}>
       {labels > 0 &&
-        spec.staves.map((staff, row) => (
+        spec.rows.rows.map(({ staff, middle }) => (
           <span
-            key={staff.id}
-            className="absolute left-0 truncate pr-2 text-[13px] font-semibold leading-tight"
-            style={{ top: SYSTEM_TOP + row * spec.pitch + 30, width: labels }}
+            key={staff}
+            className="absolute left-0 -translate-y-1/2 truncate pr-2 text-[13px] font-semibold leading-tight"
+            style={{ top: middle, width: labels }}
           >
-            {staff.name}
+            {nameOf(score, staff)}
           </span>
         ))}
       <div className="relative">
         {names &&
           labels === 0 &&
-          spec.staves.map((staff, row) => (
-            <span key={staff.id} className="absolute left-1 text-[11.5px] leading-none text-soft" style={{ top: SYSTEM_TOP + row * spec.pitch + 62 }}>
-              {staff.name}
+          spec.rows.rows.map(({ staff, bottom }) => (
+            <span key={staff} className="absolute left-1 text-[11.5px] leading-none text-soft" style={{ top: bottom + 3 }}>
+              {nameOf(score, staff)}
             </span>
           ))}
         <div ref={host} className="staff-drawing" />

@@ -1,43 +1,15 @@
 'use client';
 
 import { useEffect, useMemo, useRef } from 'react';
-import { EngineError, Fraction, type Metre, parseMetre, parseRhythm, spellLine } from '@/engine';
+import { EngineError, type Metre, parseRhythm, printRhythm } from '@/engine';
 import { ScoreLines } from '../score/score-lines';
 import type { DrawnScore } from '../score/spec';
-
-const ONE = new Fraction(1);
 
 type Spelled = { readonly score: DrawnScore } | { readonly error: string } | null;
 
 function spell(text: string, metre: Metre, sounds: number | undefined): Spelled {
   try {
-    const values = parseRhythm(text);
-    const spelled = spellLine(values, metre);
-    const length = parseMetre(metre).length;
-    let attack = 0;
-    return {
-      score: {
-        measures: spelled.map((measure, index) => ({
-          index,
-          number: index + 1,
-          start: new Fraction(index).mul(length),
-          length,
-          scale: ONE,
-          metre: measure.metre,
-          signature: index === 0 ? measure.metre : null,
-        })),
-        staves: [
-          {
-            id: 'rhythm',
-            name: '',
-            sounds: sounds ?? values.reduce((most, { sound }) => Math.max(most, sound ?? 1), 1),
-            measures: spelled,
-            values,
-            sources: values.map((value) => (value.rest ? null : { statement: 'subject', origin: attack++ })),
-          },
-        ],
-      },
-    };
+    return { score: printRhythm(parseRhythm(text), metre, { sounds }) };
   } catch (error) {
     if (error instanceof EngineError) return { error: error.message };
     throw error;

@@ -1,10 +1,10 @@
 'use client';
 
-import { type MouseEvent, useCallback, useEffect, useMemo, useRef, useState } from 'react';
-import { measureAt, metreOf, scoreOf, tempoMarkWords, tempoMarks } from '@/engine';
+import { Fragment, type MouseEvent, useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import { measureAt, metreOf, printScore, tempoMarkWords } from '@/engine';
 import { ScoreLines } from '../score/score-lines';
 import type { SystemDrawing } from '../score/draw';
-import { foldScore } from '../score/fold';
+import { foldOf } from '../score/fold';
 import type { DrawnScore, SystemSpec } from '../score/spec';
 import { subjectOf, useStudy, useValueNames } from './context';
 
@@ -17,42 +17,44 @@ function xAt({ places }: SystemDrawing, position: number): number {
   return b === a ? xb : xa + ((xb - xa) * (position - a)) / (b - a);
 }
 
-/** Measure numbers, and the name of a section where it begins. */
+/** How many letters stand over a measure besides its number. */
+function saidOver({ measures }: DrawnScore, index: number, marks: ReadonlyMap<number, string>): (readonly [number, number])[] {
+  const { letter, sections } = measures[index]!;
+  const letters = (marks.get(index)?.length ?? 0) + (letter === null ? 0 : letter.length + 3) + sections.reduce((sum, { name }) => sum + name.length + 2, 0);
+  return letters === 0 ? [] : [[index, letters]];
+}
+
+/** Measure numbers, rehearsal letters, and the name of a section where it begins. */
 function Overlay({ spec, drawing, score, marks }: { spec: SystemSpec; drawing: SystemDrawing | null; score: DrawnScore; marks: ReadonlyMap<number, string> }) {
-  const { state } = useStudy();
-  const { study, built } = state;
   if (!drawing) return null;
   return (
     <div aria-hidden className="pointer-events-none absolute inset-0">
-      {score.measures.slice(spec.first, spec.end).map((measure, column) => {
+      {spec.columns.map(({ measure: index }, column) => {
+        const { number, letter, sections, times } = score.measures[index]!;
         const left = drawing.measureLefts[column] ?? 0;
-        const next = measure.start.add(measure.length);
-        const begin = built.sections.findIndex(({ start, length }) => length.n > 0n && start.compare(measure.start) >= 0 && start.compare(next) < 0);
-        const section = study.sections[begin];
-        return (
-          <span key={measure.index} className="absolute top-0 flex items-baseline gap-2 whitespace-nowrap" style={{ left: left + 2 }}>
-            <span className="text-[11.5px] text-soft">{measure.number}</span>
-            {marks.has(measure.index) && (
-              <span data-testid="tempo-mark" className="text-[12.5px] italic">
-                {marks.get(measure.index)}
-              </span>
-            )}
-            {section && (
-              <span className="text-[14px] font-semibold">
-                {section.name}
-                {section.dynamics && <i className="ml-2 font-serif font-semibold">{section.dynamics}</i>}
-              </span>
-            )}
-          </span>
-        );
-      })}
-      {score.signs?.slice(spec.first, spec.end).map(({ times }, column) => {
-        if (times === undefined) return null;
         const right = drawing.measureLefts[column + 1] ?? drawing.width;
         return (
-          <span key={column} data-testid="times" className="absolute top-0 -translate-x-full whitespace-nowrap text-[13px] font-semibold" style={{ left: right - 2 }}>
-            {`${times} times`}
-          </span>
+          <Fragment key={index}>
+            <span className="absolute top-0 flex items-baseline gap-2 whitespace-nowrap" style={{ left: left + 2 }}>
+              <span className="text-[11.5px] text-soft">{number}</span>
+              {letter !== null && (
+                <span data-testid="letter" className="border border-ink px-1 text-[12.5px] font-semibold leading-tight">
+                  {letter}
+                </span>
+              )}
+              {marks.has(index) && (
+                <span data-testid="tempo-mark" className="text-[12.5px] italic">
+                  {marks.get(index)}
+                </span>
+              )}
+              {sections.length > 0 && <span className="text-[14px] font-semibold">{sections.map(({ name }) => name).join(' · ')}</span>}
+            </span>
+            {times !== undefined && (
+              <span data-testid="times" className="absolute top-0 -translate-x-full whitespace-nowrap text-[13px] font-semibold" style={{ left: right - 2 }}>
+                {`${times} times`}
+              </span>
+            )}
+          </Fragment>
         );
       })}
     </div>
@@ -66,29 +68,11 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
   const [showSilent, setShowSilent] = useState(false);
   const scroller = useRef<HTMLDivElement>(null);
   const drawn = useRef(new Map<number, { spec: SystemSpec; drawing: SystemDrawing; host: HTMLDivElement }>());
-  const made = useMemo(() => scoreOf(study, built), [study, built]);
-  const whole = useMemo<DrawnScore>(
-    () => ({
-      measures: made.measures,
-      staves: made.staves
-        .filter((staff) => staff.error === undefined)
-        .map(({ instrument, measures: own, values, sources }) => ({
-          id: instrument.id,
-          name: instrument.name,
-          sounds: instrument.sounds ?? values.reduce((most, { sound }) => Math.max(most, sound ?? 1), 1),
-          measures: own,
-          values,
-          sources: sources.map((source) =>
-            source === null ? null : { statement: source.statement.id, origin: source.statement.origins[source.value] ?? null },
-          ),
-        })),
-    }),
-    [made],
-  );
+  const score = useMemo(() => printScore(study, built), [study, built]);
   const valueNames = useValueNames();
-  const marks = useMemo(() => new Map(tempoMarks(study, built, made.measures).map((mark) => [mark.measure, tempoMarkWords(mark, valueNames)])), [study, built, made, valueNames]);
-  const { score, fold } = useMemo(() => foldScore(whole, made.repeats, marks), [whole, made, marks]);
-  const failures = made.staves.flatMap(({ instrument, error }) => (error ? [{ instrument, error }] : []));
+  const marks = useMemo(() => new Map(score.measures.flatMap(({ index, tempo }) => (tempo === null ? [] : [[index, tempoMarkWords(tempo, valueNames)] as const]))), [score, valueNames]);
+  const words = useMemo(() => new Map(score.printed.flatMap((index) => saidOver(score, index, marks))), [score, marks]);
+  const fold = useMemo(() => foldOf(score), [score]);
 
   const section = study.sections.find(({ id }) => id === selection.section)!;
   const chosen = built.statements.find(({ id }) => id === selection.statement);
@@ -120,7 +104,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
 
   useEffect(() => {
     let shown: HTMLElement | null = null;
-    const { measures: shownMeasures } = score;
+    const shownMeasures = score.printed.map((index) => score.measures[index]!);
     return place.watch((heard) => {
       const box = scroller.current;
       if (!box) return;
@@ -157,7 +141,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
     if (!one) return;
     const x = event.clientX - one.host.getBoundingClientRect().left;
     const column = one.drawing.measureLefts.findLastIndex((left) => left <= x);
-    const measure = score.measures[one.spec.first + Math.max(column, 0)];
+    const measure = score.measures[score.printed[one.spec.first + Math.max(column, 0)] ?? -1];
     if (measure) onSeek(measure.start.valueOf());
   };
 
@@ -174,12 +158,12 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
           Show silent staves
         </label>
       </div>
-      {made.refusals.map(({ section: id, message }) => (
+      {score.refusals.map(({ section: id, message }) => (
         <p key={id} role="alert" className="mb-2 text-[14px] text-mark">
           {message}
         </p>
       ))}
-      {failures.map(({ instrument, error }) => (
+      {score.failures.map(({ instrument, error }) => (
         <p key={instrument.id} role="alert" className="mb-2 text-[14px] text-mark">
           {`${instrument.name} cannot be written: ${error.message}`}
         </p>
@@ -195,6 +179,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
         <ScoreLines
           score={score}
           hideSilent={!showSilent}
+          words={words}
           scroller={scroller}
           onDrawn={(spec, drawing, host) => {
             if (drawing) drawn.current.set(spec.first, { spec, drawing, host });
@@ -205,7 +190,7 @@ export function ScorePanel({ onSeek }: { onSeek: (position: number) => void }) {
           {(spec, drawing) => (
             <>
               <Overlay spec={spec} drawing={drawing} score={score} marks={marks} />
-              <div data-cursor hidden className="pointer-events-none absolute left-0 w-[2px] bg-ink" style={{ top: 20, height: spec.height - 40 }} />
+              <div data-cursor hidden className="pointer-events-none absolute left-0 w-[2px] bg-ink" style={{ top: 20, height: spec.rows.height - 24 }} />
             </>
           )}
         </ScoreLines>

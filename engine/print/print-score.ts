@@ -7,11 +7,12 @@ import { measureAt } from '../views/measures';
 import type { Repeat } from '../views/repeats';
 import { type Score, type Staff, scoreOf } from '../views/score';
 import { tempoMarks } from '../views/tempo-marks';
-import { cellOf, isSilent, remembered } from './cells';
+import { cellOf, isSilent } from './cells';
 import { cuesFor } from './cues';
 import { type Dynamic, dynamicsOf } from './dynamics';
 import { lanesOf, turnsOf } from './lanes';
 import { rehearsalLetters } from './letters';
+import { remembered } from './remembered';
 import { staffDynamics } from './staff-dynamics';
 import type { PrintGroup, PrintMeasure, PrintScore, PrintStaff } from './types';
 

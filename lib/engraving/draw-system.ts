@@ -128,8 +128,9 @@ function drawLinks(vf: VexFlow, context: Vex.RenderContext, group: Element, note
 /**
  * Draws one system.
  * @param group - takes what is not VexFlow's own
+ * @param options.says - whether numbers, letters, names and tempos are drawn too
  */
-export function drawSystem(vf: VexFlow, context: Vex.RenderContext, group: Element, score: PrintScore, system: PlacedSystem): DrawnSystem {
+export function drawSystem(vf: VexFlow, context: Vex.RenderContext, group: Element, score: PrintScore, system: PlacedSystem, { says = true }: { says?: boolean } = {}): DrawnSystem {
   const { columns, made, widths, rows, x: left, y } = system;
   const drawn: { made: MadeNote; staff: number; middle: number }[] = [];
   const places: [number, number][] = [];
@@ -187,7 +188,7 @@ export function drawSystem(vf: VexFlow, context: Vex.RenderContext, group: Eleme
     if (last?.from.symbol.tiedOn) new vf.StaveTie({ firstNote: last.note, lastNote: null, firstIndexes: [0], lastIndexes: [0] }).setDirection(1).setContext(context).draw();
   }
   drawDynamics(vf, group, score, system, spots);
-  drawSaid(vf, group, score, system, lefts, x);
+  if (says) drawSaid(vf, group, score, system, lefts, x);
   const end = columns.at(-1)!;
   const lastMeasure = score.measures[end.measure + end.length - 1]!;
   places.push([lastMeasure.start.valueOf() + lastMeasure.length.valueOf(), x - 6]);

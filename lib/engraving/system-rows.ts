@@ -11,6 +11,8 @@ export type Row = {
   readonly middle: number;
   /** from the middle line to the baseline of its dynamics */
   readonly dynamics: number;
+  /** from the system's top to the lower edge of all that is its own */
+  readonly bottom: number;
 };
 export type SystemRows = {
   readonly rows: readonly Row[];
@@ -56,15 +58,20 @@ function rowReach(score: PrintScore, staff: number, columns: readonly Column[]):
 }
 
 /** Places the rows of a system one below another so that nothing of one reaches into the next. */
-export function systemRows(score: PrintScore, columns: readonly Column[], staves: readonly number[]): SystemRows {
+export function systemRows(
+  score: PrintScore,
+  columns: readonly Column[],
+  staves: readonly number[],
+  { saysTempos = true, beneath = 0 }: { saysTempos?: boolean; /** room for names under each row */ beneath?: number } = {},
+): SystemRows {
   const said = columns.map(({ measure }) => score.measures[measure]!);
-  const tempo = said.some((measure) => measure.tempo !== null) ? TEMPO_ROOM : 0;
+  const tempo = saysTempos && said.some((measure) => measure.tempo !== null) ? TEMPO_ROOM : 0;
   let y = tempo + LETTERS_ROOM;
   const rows = staves.map((staff): Row => {
     const { above, below, dynamics } = rowReach(score, staff, columns);
     const middle = y + above;
-    y = middle + below + BETWEEN;
-    return { staff, middle, dynamics };
+    y = middle + below + beneath + BETWEEN;
+    return { staff, middle, dynamics, bottom: middle + below };
   });
   return { rows, tempo: tempo === 0 ? 0 : TEMPO_ROOM - 8, letters: tempo + LETTERS_ROOM - 8, height: y };
 }

@@ -1,18 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { Fraction, type PlannedMeasure } from '@/engine';
-import { foldScore } from '@/components/score/fold';
+import { foldOf } from '@/components/score/fold';
 
 const measures = Array.from({ length: 10 }, (_, index): PlannedMeasure => ({ index, number: index + 1, start: new Fraction(index), length: new Fraction(1), scale: new Fraction(1), metre: '4/4', signature: index === 0 ? '4/4' : null }));
-const whole = { measures, staves: [] };
+const printed = [0, 1, 2, 7, 8];
 
 describe('what is repeated is printed once', () => {
   // measure 1; 2 and 3 three times (to 7); 8; 9 twice
-  const { score, fold } = foldScore(whole, [{ first: 1, length: 2, times: 3 }, { first: 8, length: 1, times: 2 }]);
-
-  it('between repeat signs, with the numbers going on', () => {
-    expect(score.measures.map(({ number }) => number)).toEqual([1, 2, 3, 8, 9]);
-    expect(score.signs).toEqual([{}, { begins: true }, { times: 3 }, {}, { begins: true, times: 2 }]);
-  });
+  const fold = foldOf({ measures, printed, repeats: [{ first: 1, length: 2, times: 3 }, { first: 8, length: 1, times: 2 }] });
 
   it('every measure is found where it is printed', () => {
     expect(measures.map(({ index }) => fold.printed(index))).toEqual([0, 1, 2, 1, 2, 1, 2, 3, 4, 4]);
@@ -20,9 +15,5 @@ describe('what is repeated is printed once', () => {
 
   it('the moving place goes through the figure again each time', () => {
     expect([0.5, 1, 2.5, 3.25, 6.75, 7, 8.5, 9.5].map(fold.place)).toEqual([0.5, 1, 2.5, 1.25, 2.75, 7, 8.5, 8.5]);
-  });
-
-  it('without repeats the score is what it was', () => {
-    expect(foldScore(whole, []).score).toBe(whole);
   });
 });
