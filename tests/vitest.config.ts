@@ -9,7 +9,7 @@ export default defineConfig({
     alias: { '@': root, 'server-only': path.join(root, 'node_modules/server-only/empty.js') },
   },
   test: {
-    include: ['tests/{engine,reference,db,api,client}/**/*.test.ts'],
+    include: ['tests/{engine,reference,engraving,db,api,client}/**/*.test.ts'],
     environment: 'node',
     testTimeout: 60_000,
     hookTimeout: 60_000,

@@ -1,4 +1,5 @@
 export { accounts } from './accounts';
+export { exportJobs, exportState, type ExportOptions } from './export-jobs';
 export { sessions } from './sessions';
 export { studies } from './studies';
 export { studyVersions } from './study-versions';

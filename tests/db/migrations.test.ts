@@ -18,7 +18,7 @@ describe('migrations', () => {
   it('make every table, and change nothing when run again', async () => {
     expect(await tables()).toEqual([]);
     await migrateDatabase(db.database, MIGRATIONS);
-    expect(await tables()).toEqual(['accounts', 'sessions', 'studies', 'study_versions', 'users', 'verification_tokens']);
+    expect(await tables()).toEqual(['accounts', 'export_jobs', 'sessions', 'studies', 'study_versions', 'users', 'verification_tokens']);
     const first = await applied();
     await migrateDatabase(db.database, MIGRATIONS);
     expect(await applied()).toEqual(first);
