@@ -1,4 +1,4 @@
-import { ensureBuild } from './lib/build.mjs';
+import { buildEngraver, ensureBuild } from './lib/build.mjs';
 import { checkDatabaseUrl } from './lib/database-url.mjs';
 import { ownDatabase } from './lib/own-cluster.mjs';
 import { ensurePackages } from './lib/packages.mjs';
@@ -38,7 +38,7 @@ await main(async () => {
   const databaseUrl = elsewhere || (await ownDatabase());
   const tasks = elsewhere ? ['migrate', 'studies', 'purge'] : ['migrate', 'studies', 'purge', 'accounts'];
   const printed = await prepareDatabase(databaseUrl, tasks);
-  if (!isDevelopment) await build();
+  await (isDevelopment ? buildEngraver() : build());
   const command = isDevelopment ? 'dev' : 'start';
   const { url, child } = await startWebServer({ command, port, databaseUrl, secret: authSecret(), publicUrl: process.env.NEXTAUTH_URL });
   console.log(`\nSesqui is at ${url}`);

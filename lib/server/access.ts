@@ -50,6 +50,16 @@ export const ACCESS = {
   'POST /api/studies/[id]/restore': { who: 'signed-in', rows: 'own', rate: 'change' },
   'GET /api/studies/[id]/versions': { who: 'signed-in', rows: 'own or demo' },
   'GET /api/studies/[id]/versions/[version]': { who: 'signed-in', rows: 'own or demo' },
+
+  'GET /api/studies/[id]/score.json': { who: 'anybody', rows: 'own or demo', rate: 'file' },
+  'GET /api/studies/[id]/score.pdf': { who: 'anybody', rows: 'own or demo', rate: 'file' },
+  'GET /api/studies/[id]/parts.zip': { who: 'anybody', rows: 'own or demo', rate: 'file' },
+  'GET /api/studies/[id]/parts/[file]': { who: 'anybody', rows: 'own or demo', rate: 'file' },
+  /** a print belongs to the account, or to the guest who shows its token; one of a demo that GET …/score.pdf asked for is anybody's */
+  'POST /api/exports': { who: 'anybody', rows: 'own or demo', rate: 'print', body: document },
+  'GET /api/exports/[id]': { who: 'anybody', rows: 'own or demo' },
+  'DELETE /api/exports/[id]': { who: 'anybody', rows: 'own', rate: 'change' },
+  'GET /api/exports/[id]/file': { who: 'anybody', rows: 'own or demo' },
 } as const satisfies Record<string, Access>;
 
 export type Route = keyof typeof ACCESS;

@@ -37,6 +37,10 @@ export const RATES = {
   change: { most: 120, within: MINUTE },
   /** questions to the open API; `SESQUI_OPEN_RATE` sets another number a minute */
   open: { most: openRate(), within: MINUTE },
+  /** files made from a study while somebody waits */
+  file: { most: 120, within: MINUTE },
+  /** prints asked for, each kept for a day */
+  print: { most: 120, within: 60 * MINUTE },
   /** accounts made from one address */
   register: { most: 10, within: 60 * MINUTE },
   /** tries at one's present password, when changing it */

@@ -1,4 +1,4 @@
-import { nextProgram } from './build.mjs';
+import { engraver, nextProgram, sourcesHash } from './build.mjs';
 import { root } from './paths.mjs';
 import { start } from './processes.mjs';
 import { Stop } from './stop.mjs';
@@ -28,6 +28,8 @@ export async function startWebServer({ command = 'start', port, databaseUrl, sec
     NEXTAUTH_SECRET: secret,
     NEXTAUTH_URL: publicUrl || url,
     NEXT_TELEMETRY_DISABLED: '1',
+    SESQUI_ENGRAVER: engraver,
+    SESQUI_RELEASE: sourcesHash(),
   };
   const child = start(process.execPath, [nextProgram, command, '-H', '127.0.0.1', '-p', String(port)], { cwd: root, env, stdio: ['ignore', 'pipe', 'pipe'] });
   let early = '';

@@ -20,7 +20,7 @@ type Case = {
   /** what the address's `[id]` is */
   readonly at?: (scene: Scene) => string;
   readonly query?: string;
-  readonly body?: () => unknown;
+  readonly body?: (scene: Scene) => unknown;
   /** whose rows a success changes; nobody else's change, and nobody's do where it is left out */
   readonly changes?: 'caller' | 'owner';
   readonly needsPassword?: true;
@@ -30,6 +30,9 @@ const study = ({ study }: Scene) => study.id;
 const gone = ({ gone }: Scene) => gone.id;
 const person = ({ owner }: Scene) => owner.id;
 const demo = () => 'lock-gates';
+const print = ({ prints }: Scene) => prints.own;
+const guestPrint = ({ prints }: Scene) => prints.guest;
+const sharedPrint = ({ prints }: Scene) => prints.shared;
 const document = () => smallStudy('Otter');
 const save = () => ({ document: document(), baseVersion: 1, saveId: id() });
 const title = () => ({ title: 'Otter', baseVersion: 1 });
@@ -108,6 +111,48 @@ const EXPECTED: Record<Route, readonly Case[]> = {
     { of: 'the owner’s, thrown away', statuses: [401, 404, 404, 404, 404, 404, 404], at: gone },
     { of: 'a demo', statuses: [401, 200, 200, 200, 200, 200, 200], at: demo },
   ],
+
+  'GET /api/studies/[id]/score.json': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: study },
+    { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: demo },
+  ],
+  'GET /api/studies/[id]/score.pdf': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: study, changes: 'owner' },
+    { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: demo },
+  ],
+  'GET /api/studies/[id]/parts.zip': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: study, changes: 'owner' },
+    { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: demo },
+  ],
+  'GET /api/studies/[id]/parts/[file]': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: study, changes: 'owner' },
+    { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: demo },
+  ],
+  'POST /api/exports': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 202, 404], body: ({ study }) => ({ what: 'score', study: study.id }), changes: 'caller' },
+    { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], body: ({ gone }) => ({ what: 'score', study: gone.id }) },
+    { of: 'a demo', statuses: [202, 202, 202, 202, 202, 202, 202], body: () => ({ what: 'score', study: 'lock-gates' }), changes: 'caller' },
+    { of: 'a document', statuses: [202, 202, 202, 202, 202, 202, 202], body: () => ({ what: 'score', document: document() }), changes: 'caller' },
+  ],
+  'GET /api/exports/[id]': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: print },
+    { of: 'a guest’s, without its token', statuses: [404, 404, 404, 404, 404, 404, 404], at: guestPrint },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: sharedPrint },
+  ],
+  'DELETE /api/exports/[id]': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: print },
+    { of: 'a guest’s, without its token', statuses: [404, 404, 404, 404, 404, 404, 404], at: guestPrint },
+    { of: 'a demo', statuses: [403, 403, 403, 403, 403, 403, 403], at: sharedPrint },
+  ],
+  'GET /api/exports/[id]/file': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: print },
+    { of: 'a guest’s, without its token', statuses: [404, 404, 404, 404, 404, 404, 404], at: guestPrint },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: sharedPrint },
+  ],
 };
 
 let database: Database;
@@ -128,8 +173,8 @@ async function attempt(route: Route, { at, query = '', body, needsPassword }: Ca
   const { owner, callerId, reader } = scene;
   const before = { owner: await rowsOf(pool, owner.id), caller: callerId && (await rowsOf(pool, callerId)) };
   const [method, pattern = ''] = route.split(' ');
-  const path = pattern.replace(/\[(?:id|calculator)\]/, at?.(scene) ?? '').replace('[version]', '1');
-  const answer = await reader.send(method as Method, path + query, method === 'GET' ? undefined : body?.());
+  const path = pattern.replace(/\[(?:id|calculator)\]/, at?.(scene) ?? '').replace('[version]', '1').replace('[file]', () => `${at === demo ? 'p1' : 'one'}.pdf`);
+  const answer = await reader.send(method as Method, path + query, method === 'GET' ? undefined : body?.(scene));
   const after = { owner: await rowsOf(pool, owner.id), caller: callerId && (await rowsOf(pool, callerId)) };
   const isChanged = (of: 'owner' | 'caller') => JSON.stringify(before[of]) !== JSON.stringify(after[of]);
   const tells = caller !== 'owner' && tellsOf(JSON.stringify(answer.body), scene);
@@ -140,7 +185,7 @@ async function attempt(route: Route, { at, query = '', body, needsPassword }: Ca
 function expected({ statuses, changes }: Case, caller: Caller) {
   const status = statuses[CALLERS.indexOf(caller)]!;
   const isDone = status < 300 && changes !== undefined;
-  const [owner, self] = [isDone && changes === 'owner', isDone && changes === 'caller'];
+  const [owner, self] = [isDone && changes === 'owner', isDone && changes === 'caller' && caller !== 'nobody'];
   // The owner who calls is both.
   return { status, changes: caller === 'owner' ? { owner: owner || self, caller: owner || self } : { owner, caller: self }, tells: false };
 }

@@ -6,7 +6,7 @@ import { OPEN_ROUTES } from '@/lib/schemas/open';
 import { ACCESS } from '@/lib/server/access';
 import { BODY_BYTES, RATES } from '@/lib/server/limits';
 import { Reader, type Method } from '../helpers/api';
-import { ownStudy } from '../helpers/callers';
+import { madePrint, ownStudy } from '../helpers/callers';
 import { smallStudy } from '../helpers/documents';
 import { create, refusalOf, studyOf } from '../helpers/own-study';
 import { applicationDatabase, newPerson, type Person } from '../helpers/people';
@@ -18,13 +18,13 @@ let pool: pg.Pool;
 beforeAll(() => void ({ database, pool } = applicationDatabase()));
 afterAll(() => pool.end());
 
-async function begun(): Promise<Person & { study: string }> {
+async function begun(): Promise<Person & { study: string; print: string }> {
   const person = await newPerson(database, 'administrator');
-  return { ...person, study: (await ownStudy(database, person.id)).id };
+  return { ...person, study: (await ownStudy(database, person.id)).id, print: await madePrint(database, { ownerId: person.id }) };
 }
 
 /** A request that changes what it can, as it should be, for each route that changes anything. */
-const CHANGES: readonly (readonly [Method, (of: { study: string; other: string }) => string, () => unknown])[] = [
+const CHANGES: readonly (readonly [Method, (of: { study: string; other: string; print: string }) => string, () => unknown])[] = [
   ['POST', () => '/api/register', () => ({ name: 'Heron', email: `${crypto.randomUUID()}@sesqui.example`, password: 'osier-lock-9-pond', role: 'student' })],
   ['PATCH', () => '/api/account', () => ({ name: 'Heron' })],
   ['POST', () => '/api/account/password', () => ({ current: 'osier-lock-9-pond', next: 'osier-lock-9-pool' })],
@@ -36,6 +36,8 @@ const CHANGES: readonly (readonly [Method, (of: { study: string; other: string }
   ['POST', ({ study }) => `/api/studies/${study}/copy`, () => ({})],
   ['DELETE', ({ study }) => `/api/studies/${study}`, () => ({})],
   ['POST', ({ study }) => `/api/studies/${study}/restore`, () => ({})],
+  ['POST', () => '/api/exports', () => ({ what: 'score', document: smallStudy() })],
+  ['DELETE', ({ print }) => `/api/exports/${print}`, () => ({})],
   // these change nothing, and are kept to the same rule
   ['POST', () => '/api/transform', () => OPEN_ROUTES.transform.example],
   ['POST', () => '/api/check', () => OPEN_ROUTES.check.example],
@@ -58,8 +60,8 @@ const FORGED: readonly (readonly [string, Record<string, string>, number, string
 
 describe('a request that another site could make a browser send', () => {
   it('is tried on every route that changes anything', () => {
-    const pattern = (path: string) => path.replace(/(?<=studies\/)[^/]+|(?<=people\/)[^/]+/, '[id]').replace(/(?<=proportions\/)[^/]+/, '[calculator]');
-    const tried = CHANGES.map(([method, path]) => `${method} ${pattern(path({ study: 'x', other: 'x' }))}`);
+    const pattern = (path: string) => path.replace(/(?<=studies\/)[^/]+|(?<=people\/)[^/]+|(?<=exports\/)[^/]+/, '[id]').replace(/(?<=proportions\/)[^/]+/, '[calculator]');
+    const tried = CHANGES.map(([method, path]) => `${method} ${pattern(path({ study: 'x', other: 'x', print: 'x' }))}`);
     expect(tried.sort()).toEqual(Object.keys(ACCESS).filter((route) => !route.startsWith('GET')).sort());
   });
 
@@ -67,8 +69,8 @@ describe('a request that another site could make a browser send', () => {
     const [person, other] = [await begun(), await begun()];
     const before = [await rowsOf(pool, person.id), await rowsOf(pool, other.id)];
     for (const [method, path, body] of CHANGES) {
-      const answer = await person.reader.send(method, path({ study: person.study, other: other.id }), body(), headers);
-      expect([path({ study: '', other: '' }), ...refusalOf(answer)]).toEqual([path({ study: '', other: '' }), status, code]);
+      const answer = await person.reader.send(method, path({ study: person.study, other: other.id, print: person.print }), body(), headers);
+      expect([path({ study: '', other: '', print: '' }), ...refusalOf(answer)]).toEqual([path({ study: '', other: '', print: '' }), status, code]);
     }
     expect([await rowsOf(pool, person.id), await rowsOf(pool, other.id)]).toEqual(before);
   });

@@ -8,9 +8,9 @@ import { writePdf } from '@/lib/engraving/pdf/write-pdf';
 const { document } = new JSDOM().window;
 const MADE_AT = new Date('2026-01-02T03:04:05.000Z');
 
-function page(inner: string, viewBox = '0 0 595.28 841.89'): Element {
+function page(inner: string, width = 595.28, height = 841.89): Element {
   const holder = document.createElement('div');
-  holder.innerHTML = `<svg xmlns="http://www.w3.org/2000/svg" viewBox="${viewBox}" font-family="Bravura, Academico">${inner}</svg>`;
+  holder.innerHTML = `<svg xmlns="http://www.w3.org/2000/svg" width="${width}pt" height="${height}pt" viewBox="0 0 ${width} ${height}" font-family="Bravura, Academico">${inner}</svg>`;
   return holder.firstElementChild!;
 }
 
@@ -30,7 +30,7 @@ const TITLE = 'Lock – Плотина Ωmega';
 const pages = () => [
   page(`<text x="40" y="60" font-size="20" font-weight="bold">${TITLE}</text><text x="40" y="100" font-size="12px" style="font-style: italic">with a hard stick</text>
     <text x="40" y="140" font-family="Bravura, Academico" font-size="30pt">\uE0A4\uE1D5 = 84</text><path d="M10 10L90 10" stroke="currentColor"/>`),
-  page('<text x="40" y="60">Second</text>', '0 0 612 792'),
+  page('<text x="40" y="60">Second</text>', 612, 792),
 ];
 
 describe('a print as PDF', () => {

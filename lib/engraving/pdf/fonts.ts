@@ -20,8 +20,8 @@ const decompress = async (woff2: Uint8Array): Promise<Uint8Array> => (await wawo
 /** VexFlow carries its fonts as data URLs of WOFF2 in modules of their own, which its package does not name. */
 async function fromVexFlow(file: string, name: string): Promise<Uint8Array> {
   const at = path.join(path.dirname(resolve('vexflow')), '../esm/src/fonts', `${file}.js`);
-  const module = (await import(/* @vite-ignore */ pathToFileURL(at).href)) as Record<string, string>;
-  const url = module[name] ?? '';
+  const carried = (await import(/* @vite-ignore */ pathToFileURL(at).href)) as Record<string, string>;
+  const url = carried[name] ?? '';
   return decompress(Buffer.from(url.slice(url.indexOf(',') + 1), 'base64'));
 }
 

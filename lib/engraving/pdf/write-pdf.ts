@@ -30,10 +30,10 @@ function coverageOf(document: PDFKit.PDFDocument): Coverage {
   };
 }
 
-/** The width and height of a page, from its viewBox in points. */
+/** The width and height of a page in points. */
 function sizeOf(svg: Element): [number, number] {
-  const [, , width, height] = (svg.getAttribute('viewBox') ?? '').split(/[\s,]+/).map(Number);
-  if (width === undefined || height === undefined || !(width > 0 && height > 0)) throw new Error('A page has no viewBox.');
+  const [width, height] = ['width', 'height'].map((name) => Number(/^([\d.]+)pt$/.exec(svg.getAttribute(name) ?? '')?.[1]));
+  if (!width || !height) throw new Error('A page does not say how large it is, in points.');
   return [width, height];
 }
 
@@ -47,7 +47,7 @@ const facesFor = (face: string, isBold: boolean, isItalic: boolean, made: { faux
 /**
  * Writes pages as a PDF: vectors, the fonts embedded as far as they are used, text as text. The same pages and the same
  * `madeAt` give the same bytes.
- * @param pages - one SVG element for each page, its viewBox in points; they are changed
+ * @param pages - one SVG element for each page, its width and height in points; they are changed
  * @param onPage - called after each page with how many there are so far
  */
 export async function writePdf(pages: Iterable<Element> | AsyncIterable<Element>, info: PdfInfo, onPage: (done: number) => void | Promise<void> = () => undefined): Promise<Uint8Array> {

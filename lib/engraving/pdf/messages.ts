@@ -1,0 +1,26 @@
+import type { Study } from '@/engine';
+import type { PageOptions } from '../page-options';
+
+/** What a print is asked for with: the score, one player's part, or every part in a zip. */
+export type PrintRequest = {
+  readonly study: Study;
+  readonly what: 'score' | 'part' | 'parts';
+  /** id of the player whose part it is */
+  readonly player?: string | undefined;
+  readonly options: PageOptions;
+  /** when the music was saved */
+  readonly madeAt: Date;
+};
+
+export type PrintedFile = { readonly bytes: Uint8Array; readonly type: string; readonly name: string };
+
+/** What the process that prints says to the one that asked. */
+export type PrintMessage =
+  | { readonly kind: 'ready' }
+  /** pages, or of several parts the parts, that are made, and how many there will be */
+  | { readonly kind: 'progress'; readonly done: number; readonly total: number }
+  | { readonly kind: 'done'; readonly file: PrintedFile; readonly total: number }
+  /** it cannot be printed, and why */
+  | { readonly kind: 'refused'; readonly code: string; readonly message: string }
+  /** a fault of ours */
+  | { readonly kind: 'fault'; readonly message: string };
