@@ -35,7 +35,13 @@ export type EngineErrorCode =
   /** a way of writing that a section does not allow */
   | 'cannot_write'
   /** a value that cannot be written in the metre */
-  | 'unspellable';
+  | 'unspellable'
+  /** a file of music that is damaged, cut off, or of another kind */
+  | 'unreadable_music'
+  /** a file made to do harm, or that cannot be told from one */
+  | 'hostile_file'
+  /** reading was given up, because the time allowed was over */
+  | 'out_of_time';
 
 /**
  * What the engine says when it refuses. `message` is a sentence for a musician; `code` is for programs; the rest says where.

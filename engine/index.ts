@@ -108,3 +108,10 @@ export { nearestTransformation, type FittingStretch, type NearestTransformation 
 export { checkAnswer } from './check/check-answer';
 export type { SpellingRemark } from './check/spelling-remarks';
 export { MISTAKES, type CheckInput, type CheckedAnswer, type CheckedValue, type Diagnosis, type Mistake, type MistakeAt, type Verdict } from './check/types';
+
+export { fromMidi } from './exchange/from-midi';
+export { fromMusicXML } from './exchange/from-musicxml';
+export { holdToNext } from './exchange/assemble';
+export { readMusic } from './exchange/read-music';
+export { takeMeasures, type TakenMeasures } from './exchange/take-measures';
+export type { Candidate, ReadMeasure, ReadOptions } from './exchange/types';

@@ -58,4 +58,28 @@ export const LIMITS = {
   subjectSteps: 2_000_000,
   /** sets of attacks that are gone through once one is found */
   subjectSets: 2_000,
+  /** bytes of a file of music, as it comes */
+  musicBytes: 32 * 1024 * 1024,
+  /** bytes of a compressed file's score, unpacked */
+  unpackedBytes: 64 * 1024 * 1024,
+  /** bytes of a compressed file's table of contents, unpacked */
+  containerBytes: 64 * 1024,
+  /** how many times its packed size a score may become, beyond the first megabyte */
+  unpackRatio: 250,
+  /** entries of a compressed file */
+  zipEntries: 1_000,
+  /** elements of MusicXML inside each other */
+  xmlDepth: 64,
+  /** elements of a whole MusicXML file */
+  xmlElements: 4_000_000,
+  /** elements of one note, direction or set of attributes */
+  xmlNodes: 20_000,
+  /** attributes of one element */
+  xmlAttributes: 64,
+  /** characters of one text, attribute, comment or declaration */
+  xmlPiece: 1_000_000,
+  /** events of a MIDI file */
+  midiEvents: 2_000_000,
+  /** parts, voices and tracks found in one file */
+  candidates: 256,
 } as const;

@@ -1,11 +1,11 @@
 'use client';
 
 import { type ChangeEvent, useId, useState } from 'react';
-import { formatRhythm } from '@/engine';
-import { type Candidate, MUSIC_FILE_BYTES, MusicFileError, readMusicFile } from '@/lib/client/music-file';
+import { type Candidate, LIMITS, formatRhythm } from '@/engine';
+import { MUSIC_TYPES, MusicFileError, readMusicFile } from '@/lib/client/music-file';
 import { TextButton } from '../ui/button';
 
-/** A rhythm from a file: MusicXML, of which a part and voice is chosen, or rhythm text. */
+/** A rhythm from a file: MusicXML or MIDI, of which a line is chosen, or rhythm text. */
 export function FromFile({ name, onRhythm }: { name: string; onRhythm: (text: string) => void }) {
   const id = useId();
   const [found, setFound] = useState<readonly Candidate[]>([]);
@@ -20,9 +20,11 @@ export function FromFile({ name, onRhythm }: { name: string; onRhythm: (text: st
     event.target.value = '';
     if (!file) return;
     setFound([]);
+    setSaid({ text: 'Reading…', isWrong: false });
     try {
-      if (file.size > MUSIC_FILE_BYTES) throw new MusicFileError(`This file is too large: ${MUSIC_FILE_BYTES / 1024 / 1024} MB is the limit.`);
-      const candidates = readMusicFile(file.name, await file.text());
+      // No more than is read at most is fetched from the disk; one byte more tells that there is more.
+      const bytes = new Uint8Array(await file.slice(0, LIMITS.musicBytes + 1).arrayBuffer());
+      const candidates = await readMusicFile(file.name, bytes);
       if (candidates.length === 1) take(candidates[0]!);
       else {
         setFound(candidates);
@@ -39,7 +41,7 @@ export function FromFile({ name, onRhythm }: { name: string; onRhythm: (text: st
         From a file
         <span className="sr-only">{`: ${name}`}</span>
       </label>
-      <input id={id} type="file" accept=".musicxml,.xml,.txt,text/plain,application/xml" onChange={(event) => void open(event)} className="ml-2 max-w-[220px] text-[13px] text-soft file:hidden" />
+      <input id={id} type="file" accept={MUSIC_TYPES} onChange={(event) => void open(event)} className="ml-2 max-w-[220px] text-[13px] text-soft file:hidden" />
       <span role={said?.isWrong ? 'alert' : 'status'} className={said?.isWrong ? 'block text-mark' : 'block text-soft'}>
         {said?.text}
       </span>

@@ -1,6 +1,7 @@
 import type { Page } from '@playwright/test';
 import type { Step } from '../../engine';
 import { expect, test } from '../helpers/browser';
+import { midi, midiTrack, mxl } from '../helpers/music-files';
 import { alert } from './open';
 
 const S = '3/8 1/8 (1/4) 1/4';
@@ -190,6 +191,11 @@ test('an answer comes from a file: rhythm text, MusicXML with a choice of lines,
   const xml = `<score-partwise><part-list><score-part id="P1"><part-name>Claves</part-name></score-part><score-part id="P2"><part-name>Bongos</part-name></score-part></part-list>${part('P1', 4)}${part('P2', 3)}</score-partwise>`;
   await input.setInputFiles({ name: 'two.musicxml', mimeType: 'application/xml', buffer: Buffer.from(xml) });
   await page.getByRole('button', { name: 'Bongos' }).click();
+  await expect(answer).toHaveValue('3/8');
+  await input.setInputFiles({ name: 'two.mxl', mimeType: 'application/octet-stream', buffer: Buffer.from(mxl(xml)) });
+  await page.getByRole('button', { name: 'Claves' }).click();
+  await expect(answer).toHaveValue('1/2');
+  await input.setInputFiles({ name: 'one.mid', mimeType: 'audio/midi', buffer: Buffer.from(midi([midiTrack([[0, 720]])])) });
   await expect(answer).toHaveValue('3/8');
   await input.setInputFiles({ name: 'bad.xml', mimeType: 'application/xml', buffer: Buffer.from('<!DOCTYPE a [<!ENTITY x "y">]><a>&x;</a>') });
   await expect(alert(page)).toContainText('This file defines entities of its own');
