@@ -55,33 +55,32 @@ function measureWidth(score: DrawnScore, index: number, words: number): number {
   return Math.max(times === undefined ? 58 : 96, over, room + 26) + signature + (begins ? REPEAT_SIGN : 0) + (times === undefined ? 0 : REPEAT_SIGN);
 }
 
-/**
- * Breaks measures into systems that fill the width; a system keeps at least one measure.
- * @param options.words - letters that are said over a measure, by its index
- */
-export function breakSystems(score: DrawnScore, width: number, options: { hideSilent: boolean; namesBeneath: boolean; words: ReadonlyMap<number, number> }): SystemSpec[] {
-  const natural = score.printed.map((index) => measureWidth(score, index, options.words.get(index) ?? 0));
+export type BreakOptions = { readonly hideSilent: boolean; readonly namesBeneath: boolean; /** letters that are said over a measure, by its index */ readonly words: ReadonlyMap<number, number> };
+
+/** Breaks measures into systems that fill the width, one at a time; a system keeps at least one measure. */
+export function* breakSystems(score: DrawnScore, width: number, options: BreakOptions): Generator<SystemSpec, void, void> {
   const all = score.staves.map((_, index) => index);
-  const systems: SystemSpec[] = [];
+  const count = score.printed.length;
+  const natural: number[] = [];
+  const naturalOf = (n: number): number => (natural[n] ??= measureWidth(score, score.printed[n]!, options.words.get(score.printed[n]!) ?? 0));
   let first = 0;
-  while (first < natural.length) {
+  while (first < count) {
     let end = first;
     let room = OPENING;
-    while (end < natural.length && (end === first || room + natural[end]! <= width)) {
-      room += natural[end]!;
+    while (end < count && (end === first || room + naturalOf(end) <= width)) {
+      room += naturalOf(end);
       end += 1;
     }
-    const isLast = end === natural.length;
+    const isLast = end === count;
     const stretch = (width - OPENING) / (room - OPENING);
     const factor = isLast ? Math.min(stretch, 1.35) : stretch;
     const widths = natural.slice(first, end).map((one, index) => one * factor + (index === 0 ? OPENING : 0));
     const columns = score.printed.slice(first, end).map((measure) => ({ measure, length: 1 }));
-    const heard = systems.length === 0 || !options.hideSilent ? all : all.filter((staff) => columns.some(({ measure }) => !score.staves[staff]!.isSilent(measure)));
+    const heard = first === 0 || !options.hideSilent ? all : all.filter((staff) => columns.some(({ measure }) => !score.staves[staff]!.isSilent(measure)));
     const rows = systemRows(score, columns, heard.length > 0 ? heard : all.slice(0, 1), { saysTempos: false, beneath: options.namesBeneath ? NAME_BENEATH : 0 });
-    systems.push({ first, end, columns, widths, rows });
+    yield { first, end, columns, widths, rows };
     first = end;
   }
-  return systems;
 }
 
 /** What a system looks like, as text: the same text needs no new drawing. */

@@ -1,11 +1,11 @@
 'use client';
 
-import { type ReactNode, type RefObject, useMemo, useRef } from 'react';
+import { type ReactNode, type RefObject, useRef } from 'react';
 import { useWidth } from '../study/use-width';
 import type { SystemDrawing } from './draw';
-import { breakSystems } from './layout';
 import type { DrawnScore, SystemSpec } from './spec';
 import { System } from './system';
+import { useSystems } from './use-systems';
 
 const NONE: ReadonlyMap<number, number> = new Map();
 
@@ -33,10 +33,7 @@ export function ScoreLines({
   const frame = useRef<HTMLDivElement>(null);
   const width = useWidth(frame);
   const labels = !names || width < 720 ? 0 : 108;
-  const systems = useMemo(
-    () => (width === 0 ? [] : breakSystems(score, width - labels - 2, { hideSilent, namesBeneath: names && labels === 0, words })),
-    [score, width, labels, hideSilent, names, words],
-  );
+  const systems = useSystems(score, width === 0 ? 0 : width - labels - 2, { hideSilent, namesBeneath: names && labels === 0, words });
   return (
     <div ref={frame}>
       {systems.map((spec) => (
