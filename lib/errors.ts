@@ -15,7 +15,7 @@ export const ERROR_STATUS = {
   /** nobody would be left to grant roles */
   last_administrator: 409,
   too_large: 413,
-  /** the body is of another kind than JSON */
+  /** the body is of another kind than the route takes */
   wrong_type: 415,
   /** read, but not accepted; `fields` says where */
   invalid: 422,

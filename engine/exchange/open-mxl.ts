@@ -38,5 +38,5 @@ export async function openMxl(bytes: Uint8Array, options: ReadOptions): Promise<
   await readXml(decoded(unpack(bytes, container, LIMITS.containerBytes, options)), reader);
   const path = reader.path ?? unreadable('This compressed MusicXML does not say which of its files is the score.');
   const score = entries.get(path) ?? unreadable(`This compressed MusicXML names “${shown(path)}” as its score, and holds no such file.`);
-  return unpack(bytes, score, LIMITS.unpackedBytes, options);
+  return unpack(bytes, score, Math.min(options.unpackedBytes ?? Infinity, LIMITS.unpackedBytes), options);
 }

@@ -34,4 +34,6 @@ export type ReadOptions = {
   readonly pause?: () => Promise<void> | void;
   /** asked between steps: true gives up */
   readonly isExpired?: () => boolean;
+  /** most bytes of a compressed score, unpacked, where less than the engine's own limit is wanted */
+  readonly unpackedBytes?: number;
 };

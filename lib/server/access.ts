@@ -10,11 +10,16 @@ export type Access = {
   /** whose rows it reads or changes: one's own, one's own or a demo, none of anybody's work */
   readonly rows: 'own' | 'own or demo' | 'demo' | 'people' | 'none';
   readonly rate?: RateName;
-  /** most bytes of the body; without it, no body is read */
+  /** most bytes of the body, which is JSON; without it, no body is read */
   readonly body?: number;
+  /** in place of JSON, a file: its most bytes, and the kinds that it may be sent as */
+  readonly file?: { readonly most: number; readonly kinds: readonly string[] };
 };
 
-const { small, document, open } = BODY_BYTES;
+const { small, document, open, music } = BODY_BYTES;
+
+/** Kinds of files of music; none of them can a form of another site send. */
+const MUSIC = ['application/vnd.recordare.musicxml+xml', 'application/vnd.recordare.musicxml', 'application/xml', 'text/xml', 'audio/midi', 'audio/x-midi', 'audio/mid', 'application/zip', 'application/octet-stream'];
 
 /**
  * Who may what: every handler, and what guards it. A handler without a row does not compile; a row or a handler without
@@ -30,6 +35,7 @@ export const ACCESS = {
   'POST /api/check': { who: 'anybody', rows: 'none', rate: 'open', body: open },
   'POST /api/find': { who: 'anybody', rows: 'none', rate: 'open', body: open },
   'POST /api/proportions/[calculator]': { who: 'anybody', rows: 'none', rate: 'open', body: open },
+  'POST /api/read-music': { who: 'anybody', rows: 'none', rate: 'music', file: { most: music, kinds: MUSIC } },
 
   'GET /api/account': { who: 'signed-in', rows: 'own' },
   'PATCH /api/account': { who: 'signed-in', rows: 'own', rate: 'change', body: small },

@@ -13,6 +13,8 @@ export const BODY_BYTES = {
   open: 64 * 1024,
   /** a study document and what travels with it */
   document: 2 * 1024 * 1024,
+  /** a file of music to be read */
+  music: 8 * 1024 * 1024,
 } as const;
 
 const SECOND = 1_000;
@@ -37,6 +39,8 @@ export const RATES = {
   change: { most: 120, within: MINUTE },
   /** questions to the open API; `SESQUI_OPEN_RATE` sets another number a minute */
   open: { most: openRate(), within: MINUTE },
+  /** files of music read */
+  music: { most: 60, within: MINUTE },
   /** files made from a study while somebody waits */
   file: { most: 120, within: MINUTE },
   /** prints asked for, each kept for a day */
@@ -53,6 +57,13 @@ export const RATES = {
 
 export type Rate = (typeof RATES)[keyof typeof RATES];
 export type RateName = keyof typeof RATES;
+
+/** How long a file of music may be read, in milliseconds. */
+export const READING_TIME = 10 * SECOND;
+/** Most bytes of a compressed score, unpacked. */
+export const UNPACKED_BYTES = 16 * 1024 * 1024;
+/** Files of music that are read at once; further ones are told to come again. */
+export const READINGS = 8;
 
 /** Counts kept in memory at most for one rate; the oldest go first. */
 export const COUNTS_KEPT = 20_000;

@@ -4,7 +4,7 @@ import { ACCESS, type Access, type Route, type SignedInRoute } from './access';
 import { addressOf } from './address';
 import { getCurrentUser, type CurrentUser } from './current-user';
 import { errorResponse } from './error-response';
-import { readBody, requireJson } from './read-body';
+import { readBody, readBytes, requireJson, requireKind } from './read-body';
 import { requireRate } from './rate-limit';
 import { requireSameOrigin } from './same-origin';
 
@@ -16,7 +16,7 @@ export type PublicArgs = {
   params: Params;
   /** what stands behind the question mark, unchecked */
   query: Record<string, string>;
-  /** the JSON body, unchecked; undefined where the route takes none */
+  /** the JSON body, unchecked; the bytes of a file; undefined where the route takes neither */
   body: unknown;
   user: CurrentUser | null;
 };
@@ -25,12 +25,13 @@ export type UserArgs = Omit<PublicArgs, 'user'> & { user: CurrentUser };
 async function admit(req: Request, context: Context, access: Access): Promise<PublicArgs> {
   requireSameOrigin(req);
   const isChange = req.method !== 'GET' && req.method !== 'HEAD';
-  if (isChange) requireJson(req);
+  if (access.file) requireKind(req, access.file.kinds);
+  else if (isChange) requireJson(req);
   const user = await getCurrentUser();
   if (access.who !== 'anybody' && !user) throw new AppError('unauthorized', 'Sign in first.');
   if (Array.isArray(access.who) && user && !access.who.includes(user.role)) throw new AppError('forbidden', 'This is for administrators only.');
   if (access.rate) requireRate(access.rate, user?.id ?? addressOf(req.headers.get('x-forwarded-for')));
-  const body = access.body === undefined ? undefined : await readBody(req, access.body);
+  const body = access.file ? await readBytes(req, access.file.most) : access.body === undefined ? undefined : await readBody(req, access.body);
   return { req, params: await context.params, query: Object.fromEntries(new URL(req.url).searchParams), body, user };
 }
 

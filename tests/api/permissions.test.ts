@@ -7,6 +7,7 @@ import { ACCESS, type Route } from '@/lib/server/access';
 import type { Method } from '../helpers/api';
 import { CALLERS, newScene, type Caller, type Scene, type Statuses } from '../helpers/callers';
 import { smallStudy } from '../helpers/documents';
+import { musicXML, note } from '../helpers/music-files';
 import { applicationDatabase } from '../helpers/people';
 import { handlers } from '../helpers/routes';
 import { rowsOf } from '../helpers/rows';
@@ -24,6 +25,7 @@ type Case = {
   /** whose rows a success changes; nobody else's change, and nobody's do where it is left out */
   readonly changes?: 'caller' | 'owner';
   readonly needsPassword?: true;
+  readonly kind?: string;
 };
 
 const study = ({ study }: Scene) => study.id;
@@ -50,6 +52,7 @@ const EXPECTED: Record<Route, readonly Case[]> = {
     { of: 'nobody’s rows', statuses: [200, 200, 200, 200, 200, 200, 200], at: () => 'lengths', body: () => OPEN_ROUTES.lengths.example },
     { of: 'what is no calculator', statuses: [404, 404, 404, 404, 404, 404, 404], at: () => 'toString', body: () => ({}) },
   ],
+  'POST /api/read-music': [{ of: 'nobody’s rows', statuses: [200, 200, 200, 200, 200, 200, 200], body: () => musicXML([note(4)]), kind: 'application/xml' }],
   'POST /api/register': [{ of: 'a new account', statuses: [201, 201, 201, 201, 201, 201, 201], body: another }],
 
   'GET /api/account': [{ of: 'one’s own', statuses: [401, 200, 200, 200, 200, 200, 200] }],
@@ -168,13 +171,13 @@ afterAll(() => pool.end());
 const tellsOf = (text: string, { study, gone }: Scene) => [study.id, gone.id, study.title, gone.title].some((word) => text.includes(word));
 
 /** One caller’s try: the status, and whose rows it changed. */
-async function attempt(route: Route, { at, query = '', body, needsPassword }: Case, caller: Caller) {
+async function attempt(route: Route, { at, query = '', body, needsPassword, kind }: Case, caller: Caller) {
   const scene = await newScene(database, caller, needsPassword && passwordHash);
   const { owner, callerId, reader } = scene;
   const before = { owner: await rowsOf(pool, owner.id), caller: callerId && (await rowsOf(pool, callerId)) };
   const [method, pattern = ''] = route.split(' ');
   const path = pattern.replace(/\[(?:id|calculator)\]/, at?.(scene) ?? '').replace('[version]', '1').replace('[file]', () => `${at === demo ? 'p1' : 'one'}.pdf`);
-  const answer = await reader.send(method as Method, path + query, method === 'GET' ? undefined : body?.(scene));
+  const answer = await reader.send(method as Method, path + query, method === 'GET' ? undefined : body?.(scene), kind === undefined ? {} : { 'content-type': kind });
   const after = { owner: await rowsOf(pool, owner.id), caller: callerId && (await rowsOf(pool, callerId)) };
   const isChanged = (of: 'owner' | 'caller') => JSON.stringify(before[of]) !== JSON.stringify(after[of]);
   const tells = caller !== 'owner' && tellsOf(JSON.stringify(answer.body), scene);

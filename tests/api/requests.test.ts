@@ -43,6 +43,7 @@ const CHANGES: readonly (readonly [Method, (of: { study: string; other: string; 
   ['POST', () => '/api/check', () => OPEN_ROUTES.check.example],
   ['POST', () => '/api/find', () => OPEN_ROUTES.find.example],
   ['POST', () => '/api/proportions/canon', () => OPEN_ROUTES.canon.example],
+  ['POST', () => '/api/read-music', () => '<score-partwise/>'],
 ];
 
 const form = 'application/x-www-form-urlencoded';

@@ -88,6 +88,11 @@ describe('hostile files', () => {
     expect(asked).toBe(11);
   });
 
+  it('a compressed score may be held to a smaller limit', async () => {
+    await expect(readMusic(mxl(score), { unpackedBytes: 200 })).rejects.toMatchObject({ code: 'too_large' });
+    expect(await readMusic(mxl(score), { unpackedBytes: 2_000 })).toHaveLength(1);
+  });
+
   it('what they unpack is never held as a whole', async () => {
     // 60 MB of honest music in steps: no more than a fraction of it is alive at once.
     const measure = (n: number) => `<measure number="${n}">${note(4, `<!--${String(n).repeat(12)}${noise(60).join('')}-->`)}</measure>`;
