@@ -8,7 +8,7 @@ export const readPerson = cache(async () => {
   try {
     const user = await getCurrentUser();
     const account = user && (await getAccount(getDatabase(), user.id));
-    return account ? { name: account.name || account.email, role: account.role, valueNames: account.valueNames } : null;
+    return account ? { name: account.name || account.email, role: account.role, valueNames: account.valueNames, paperSize: account.paperSize } : null;
   } catch {
     return null;
   }
