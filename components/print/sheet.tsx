@@ -20,7 +20,7 @@ export function Sheet({ vexflow, score, layout, page, options, onDrawn }: { vexf
   }, [vexflow, score, layout, page, options, onDrawn]);
   const { width, height } = layout.geometry.paper;
   return (
-    <li aria-label={`Page ${page.number}`} className="sheet mx-auto mb-8 max-w-full border border-hair bg-white text-black print:m-0 print:border-0" style={{ width: `${width}pt`, aspectRatio: `${width} / ${height}` }}>
+    <li aria-label={`Page ${page.number}`} className="sheet mx-auto mb-8 max-w-full border border-hair print:m-0 print:border-0" style={{ background: '#fff', color: '#000', width: `${width}pt`, aspectRatio: `${width} / ${height}` }}>
       <div ref={host} className="staff-drawing [&_svg]:h-auto [&_svg]:w-full" />
     </li>
   );
