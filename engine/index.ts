@@ -109,6 +109,9 @@ export { checkAnswer } from './check/check-answer';
 export type { SpellingRemark } from './check/spelling-remarks';
 export { MISTAKES, type CheckInput, type CheckedAnswer, type CheckedValue, type Diagnosis, type Mistake, type MistakeAt, type Verdict } from './check/types';
 
+export { packMxl } from './exchange/pack-mxl';
+export { toMusicXML } from './exchange/to-musicxml';
+export { staffShape, type StaffShape } from './print/staff-shape';
 export { midiDivision, toMidi } from './exchange/to-midi';
 export type { MidiDivision } from './exchange/write/division';
 export { statementsCsv } from './exchange/statements-csv';
