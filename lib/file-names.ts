@@ -10,7 +10,7 @@ const LONGEST = 100;
  */
 export function fileName(parts: readonly string[], extension: string): string {
   const words = parts.map((part) => part.replaceAll(FORBIDDEN, ' ').replaceAll(/\s+/g, ' ').trim()).filter((part) => part !== '');
-  const base = [...words.join(' - ')].slice(0, LONGEST).join('').replace(/^\.+/, '').replace(/[. ]+$/, '');
+  const base = [...words.join(' - ')].slice(0, LONGEST).join('').replaceAll(/^[. ]+|[. ]+$/g, '');
   return `${base === '' || RESERVED.test(base) ? `Study ${base}`.trim() : base}.${extension}`;
 }
 

@@ -44,3 +44,6 @@ export function attempt(editor: StudyEditor, edit: () => Edit): string | null {
 /** How the reader calls values: quarter note or crotchet. */
 export const ValueNamesContext = createContext<ValueNames>('american');
 export const useValueNames = (): ValueNames => useContext(ValueNamesContext);
+
+/** The paper that the reader prints on. */
+export const PaperContext = createContext<'a4' | 'letter'>('a4');

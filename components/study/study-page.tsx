@@ -13,7 +13,7 @@ import { StudyEditor, derive } from '@/lib/client/study-editor';
 import { StudySaver } from '@/lib/client/study-saver';
 import type { StudyItem } from '@/lib/schemas/studies';
 import { Button, TextButton } from '../ui/button';
-import { ValueNamesContext } from './context';
+import { PaperContext, ValueNamesContext } from './context';
 import { KeptLine } from './kept-line';
 import { SavingLine } from './saving-line';
 import { StudyEditorView } from './study-editor';
@@ -221,10 +221,12 @@ function Addressed({ id, isSignedIn }: { id: string; isSignedIn: boolean }) {
 }
 
 /** A study by its address: from the server with the browser's draft over it, or from this browser alone. */
-export function StudyPage({ valueNames, ...study }: { id: string; isSignedIn: boolean; valueNames: ValueNames }) {
+export function StudyPage({ valueNames, paper, ...study }: { id: string; isSignedIn: boolean; valueNames: ValueNames; paper: 'a4' | 'letter' }) {
   return (
     <ValueNamesContext value={valueNames}>
-      <Addressed {...study} />
+      <PaperContext value={paper}>
+        <Addressed {...study} />
+      </PaperContext>
     </ValueNamesContext>
   );
 }

@@ -1,4 +1,4 @@
-import type { Threads } from '@/engine';
+import { type Statement, type ThreadRow, type Threads, formatFraction, rotationWords } from '@/engine';
 
 export type ThreadGeometry = {
   readonly left: number;
@@ -21,6 +21,46 @@ export function threadPath(geometry: ThreadGeometry, row: number, x1: number, x2
   const yb = rowY(geometry, row + 1) - TICK;
   const b = bend(geometry.pitch);
   return `M${x1.toFixed(1)} ${ya}C${x1.toFixed(1)} ${ya + b},${x2.toFixed(1)} ${yb - b},${x2.toFixed(1)} ${yb}`;
+}
+
+/** The ticks of a row: one path for each instrument that they are handed to, null for the row's own. */
+export function ticksPaths({ statement: { assigned }, ticks }: ThreadRow, geometry: ThreadGeometry, index: number): [instrument: string | null, path: string][] {
+  const y = rowY(geometry, index);
+  const paths = new Map<string | null, string>();
+  ticks.forEach(({ at }, attack) => {
+    const instrument = assigned?.[attack] ?? null;
+    paths.set(instrument, `${paths.get(instrument) ?? ''}M${tickX(geometry, at.valueOf()).toFixed(1)} ${y - TICK}v${2 * TICK}`);
+  });
+  return [...paths];
+}
+
+export function threadsPath(threads: Threads, geometry: ThreadGeometry, origin: number | null): string {
+  return threads.threads
+    .filter((thread) => origin === null || thread.origin === origin)
+    .map(({ row, from, to }) =>
+      threadPath(
+        geometry,
+        row,
+        tickX(geometry, threads.rows[row]!.ticks[from]!.at.valueOf()),
+        tickX(geometry, threads.rows[row + 1]!.ticks[to]!.at.valueOf()),
+      ),
+    )
+    .join('');
+}
+
+/** What fits beside a row, in characters. */
+const ROOM = 17;
+
+/** Beside a row: what is done to the subject in it; what has no room there is told in the table of statements. */
+export function rowWords({ subject, factor, rotation, rotationBy, repeats }: Statement): string {
+  if (subject === null) return 'no subject';
+  const words = [
+    ...(factor.equals(1) && (rotation !== 0 || repeats !== undefined) ? [] : [`times ${formatFraction(factor)}`]),
+    ...(rotation === 0 ? [] : [`by ${rotationWords(rotation, rotationBy ?? 'values').replace(/ of .*/, '')}`]),
+    ...(repeats === undefined ? [] : [`${repeats} times`]),
+  ];
+  while (words.length > 1 && words.join(', ').length > ROOM) words.pop();
+  return words.join(', ');
 }
 
 /** How far along its curve a thread is at a height between two rows: the curve's parameter, found by halving. */

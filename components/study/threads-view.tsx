@@ -2,22 +2,18 @@
 
 import { type KeyboardEvent, type PointerEvent, useEffect, useMemo, useRef, useState } from 'react';
 import {
-  type Statement,
   type ThreadReading,
   type ThreadRow,
-  type Threads,
   describeStatement,
-  formatFraction,
   metreOf,
   parseMetre,
   placeWords,
-  rotationWords,
   threadsOf,
 } from '@/engine';
 import { Segments } from '../ui/segments';
 import { useStudy } from './context';
 import { playersOf, tint } from './family';
-import { type ThreadGeometry, TICK, hit, rowY, threadPath, tickX } from './thread-geometry';
+import { type ThreadGeometry, TICK, hit, rowWords, rowY, threadsPath, tickX, ticksPaths } from './thread-geometry';
 import { useWidth } from './use-width';
 
 const READINGS = [
@@ -25,46 +21,6 @@ const READINGS = [
   ['from-one-start', 'From one start'],
   ['to-one-end', 'To one end'],
 ] as const satisfies readonly (readonly [ThreadReading, string])[];
-
-/** The ticks of a row: one path for each instrument that they are handed to, null for the row's own. */
-function ticksPaths({ statement: { assigned }, ticks }: ThreadRow, geometry: ThreadGeometry, index: number): [instrument: string | null, path: string][] {
-  const y = rowY(geometry, index);
-  const paths = new Map<string | null, string>();
-  ticks.forEach(({ at }, attack) => {
-    const instrument = assigned?.[attack] ?? null;
-    paths.set(instrument, `${paths.get(instrument) ?? ''}M${tickX(geometry, at.valueOf()).toFixed(1)} ${y - TICK}v${2 * TICK}`);
-  });
-  return [...paths];
-}
-
-function threadsPath(threads: Threads, geometry: ThreadGeometry, origin: number | null): string {
-  return threads.threads
-    .filter((thread) => origin === null || thread.origin === origin)
-    .map(({ row, from, to }) =>
-      threadPath(
-        geometry,
-        row,
-        tickX(geometry, threads.rows[row]!.ticks[from]!.at.valueOf()),
-        tickX(geometry, threads.rows[row + 1]!.ticks[to]!.at.valueOf()),
-      ),
-    )
-    .join('');
-}
-
-/** What fits beside a row, in characters. */
-const ROOM = 17;
-
-/** Beside a row: what is done to the subject in it; what has no room there is told in the table of statements. */
-function rowWords({ subject, factor, rotation, rotationBy, repeats }: Statement): string {
-  if (subject === null) return 'no subject';
-  const words = [
-    ...(factor.equals(1) && (rotation !== 0 || repeats !== undefined) ? [] : [`times ${formatFraction(factor)}`]),
-    ...(rotation === 0 ? [] : [`by ${rotationWords(rotation, rotationBy ?? 'values').replace(/ of .*/, '')}`]),
-    ...(repeats === undefined ? [] : [`${repeats} times`]),
-  ];
-  while (words.length > 1 && words.join(', ').length > ROOM) words.pop();
-  return words.join(', ');
-}
 
 /** Measure lines and numbers along the top: thinned until they stand apart. */
 function Ruler({ geometry, measure, extent, height }: { geometry: ThreadGeometry; measure: number; extent: number; height: number }) {

@@ -2,15 +2,18 @@
 
 import { type CSSProperties, type KeyboardEvent, type ReactNode, useEffect, useId, useLayoutEffect, useRef, useState } from 'react';
 import { createPortal } from 'react-dom';
+import { buttonClass } from './button';
 
-const FOCUSABLE = 'input:not(:disabled), select:not(:disabled), textarea:not(:disabled), button:not(:disabled)';
+const FOCUSABLE = 'a[href], input:not(:disabled), select:not(:disabled), textarea:not(:disabled), button:not(:disabled)';
 const MARGIN = 12;
+const WORD = 'border-b-2 border-current px-px text-left font-sans text-[0.86em] font-[560] leading-[1.15] hover:bg-wash aria-expanded:bg-wash';
 
-/** Puts a panel under its word, kept inside the page. */
-function place(panel: HTMLElement, word: HTMLElement): void {
+/** Puts a panel under its word, its left or right edge at the word's, kept inside the page. */
+function place(panel: HTMLElement, word: HTMLElement, edge: 'left' | 'right'): void {
   const under = word.getBoundingClientRect();
   const farthest = document.documentElement.clientWidth - panel.offsetWidth - MARGIN;
-  panel.style.left = `${Math.max(MARGIN, Math.min(under.left, farthest)) + window.scrollX}px`;
+  const left = edge === 'left' ? under.left : under.right - panel.offsetWidth;
+  panel.style.left = `${Math.max(MARGIN, Math.min(left, farthest)) + window.scrollX}px`;
   panel.style.top = `${under.bottom + window.scrollY + 6}px`;
 }
 
@@ -23,6 +26,7 @@ export function Token({
   label,
   style,
   className = '',
+  look = 'word',
   children,
 }: {
   text: string;
@@ -30,6 +34,8 @@ export function Token({
   label: string;
   style?: CSSProperties;
   className?: string;
+  /** a word of a sentence, or a button that stands alone, whose text says what it is; a button's panel is the wider */
+  look?: 'word' | 'button';
   /** what opens; `close` closes it and gives the focus back */
   children: (close: () => void) => ReactNode;
 }) {
@@ -39,10 +45,11 @@ export function Token({
   const panel = useRef<HTMLDivElement>(null);
 
   const close = () => setOpen(false);
+  const edge = look === 'word' ? 'left' : 'right';
 
   // After every drawing: a change of the sentence may have moved the word.
   useLayoutEffect(() => {
-    if (open && panel.current && button.current) place(panel.current, button.current);
+    if (open && panel.current && button.current) place(panel.current, button.current, edge);
   });
 
   useEffect(() => {
@@ -54,7 +61,7 @@ export function Token({
       const target = event.target as Node;
       if (!own?.contains(target) && !word?.contains(target)) setOpen(false);
     };
-    const moved = () => own && word && place(own, word);
+    const moved = () => own && word && place(own, word, edge);
     document.addEventListener('pointerdown', outside);
     window.addEventListener('resize', moved);
     return () => {
@@ -63,7 +70,7 @@ export function Token({
       // What had the focus is gone with the panel: the word takes it back.
       if (document.activeElement === document.body || own?.contains(document.activeElement)) word?.focus({ preventScroll: true });
     };
-  }, [open]);
+  }, [open, edge]);
 
   const onKeyDown = (event: KeyboardEvent<HTMLDivElement>) => {
     if (event.key === 'Escape') {
@@ -72,8 +79,8 @@ export function Token({
     } else if (event.key === 'Tab') {
       // The panel stands at the end of the page: Tab goes round inside it, Escape leads out.
       const stops = [...event.currentTarget.querySelectorAll<HTMLElement>(FOCUSABLE)];
-      const edge = event.shiftKey ? stops[0] : stops.at(-1);
-      const isEdge = document.activeElement === edge || (edge instanceof HTMLInputElement && edge.type === 'radio' && edge.name === (document.activeElement as HTMLInputElement | null)?.name);
+      const last = event.shiftKey ? stops[0] : stops.at(-1);
+      const isEdge = document.activeElement === last || (last instanceof HTMLInputElement && last.type === 'radio' && last.name === (document.activeElement as HTMLInputElement | null)?.name);
       if (!isEdge) return;
       event.preventDefault();
       (event.shiftKey ? stops.at(-1) : stops[0])?.focus();
@@ -88,9 +95,9 @@ export function Token({
         aria-expanded={open}
         aria-haspopup="dialog"
         aria-controls={open ? id : undefined}
-        aria-label={`${label}: ${text}`}
+        aria-label={look === 'word' ? `${label}: ${text}` : undefined}
         style={style}
-        className={`border-b-2 border-current px-px text-left font-sans text-[0.86em] font-[560] leading-[1.15] hover:bg-wash aria-expanded:bg-wash ${className}`}
+        className={`${look === 'word' ? WORD : `${buttonClass()} aria-expanded:bg-wash`} ${className}`}
         onClick={() => setOpen(!open)}
       >
         {text}
@@ -103,11 +110,15 @@ export function Token({
             role="dialog"
             aria-label={label}
             onKeyDown={onKeyDown}
-            className="absolute z-50 max-h-[70vh] w-max max-w-[min(24rem,calc(100vw-24px))] overflow-y-auto border border-ink bg-paper p-4 font-sans text-[15px] leading-normal text-ink"
+            className={`absolute z-50 max-h-[70vh] overflow-y-auto border border-ink bg-paper font-sans text-[15px] leading-normal text-ink ${
+              look === 'word' ? 'w-max max-w-[min(24rem,calc(100vw-24px))] p-4' : 'w-[min(36rem,calc(100vw-24px))] px-5 py-4'
+            }`}
           >
-            <p aria-hidden className="mb-2.5 text-[13px] text-soft">
-              {label}
-            </p>
+            {look === 'word' && (
+              <p aria-hidden className="mb-2.5 text-[13px] text-soft">
+                {label}
+              </p>
+            )}
             {children(close)}
           </div>,
           document.body,

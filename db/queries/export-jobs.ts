@@ -86,7 +86,7 @@ export async function cancelExport(database: Database, { id: wanted, ...asker }:
 }
 
 /** How long a worker has a print before it must say that it is still there, and how often one is begun. */
-export const LEASE_SECONDS = 20;
+export const LEASE_SECONDS = 10;
 export const ATTEMPTS = 3;
 const leaseEnd = sql`now() + make_interval(secs => ${LEASE_SECONDS})`;
 const isLost = and(eq(exportJobs.state, 'running'), sql`${exportJobs.leaseUntil} < now()`);

@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { LIMITS } from '@/engine';
 import { STAFF_SIZES } from '../engraving/page-options';
 import { moment } from './common';
-import { studyParams } from './studies';
+import { studyParams, versionNumber } from './studies';
 
 export const PAPERS = ['a4', 'letter'] as const;
 export const ORIENTATIONS = ['portrait', 'landscape'] as const;
@@ -44,9 +44,12 @@ export const exportBody = z
     staff: staff.optional(),
     document: z.unknown().optional(),
     study: studyParams.shape.id.optional(),
+    /** the version that the asker sees; another one there is refused as `version_conflict` */
+    version: versionNumber.optional(),
   })
   .refine(({ what, player }) => (what === 'part') === (player !== undefined), { message: 'A part needs its player, and nothing else does.', path: ['player'] })
-  .refine(({ document, study }) => (document === undefined) !== (study === undefined), { message: 'Send a document, or name a saved study.', path: ['document'] });
+  .refine(({ document, study }) => (document === undefined) !== (study === undefined), { message: 'Send a document, or name a saved study.', path: ['document'] })
+  .refine(({ study, version }) => study !== undefined || version === undefined, { message: 'Only a saved study has a version.', path: ['version'] });
 
 export const exportParams = z.object({ id: z.uuid('This id cannot be read.') });
 

@@ -82,7 +82,7 @@ export const studyListItemResponse = z.object({ study: studyListItem });
 /** The answer 409 `version_conflict`: somebody saved first, and this is what they saved. */
 export const conflictResponse = errorResponse.extend({ current: studyItem });
 
-const versionNumber = z.int('A version is a whole number.').min(1, 'Versions count from 1.').max(2_000_000_000, 'There is no such version.');
+export const versionNumber = z.int('A version is a whole number.').min(1, 'Versions count from 1.').max(2_000_000_000, 'There is no such version.');
 const title = typedText('A title', LIMITS.name);
 
 /** `document` is read by `parseStudy` afterwards, whose refusals name the place. */

@@ -1,9 +1,9 @@
 import fs from 'node:fs';
 import { JSDOM } from 'jsdom';
-import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs';
 import { describe, expect, it } from 'vitest';
 import { fontRuns } from '@/lib/engraving/pdf/font-runs';
 import { writePdf } from '@/lib/engraving/pdf/write-pdf';
+import { readPdf } from '../helpers/read-pdf';
 
 const { document } = new JSDOM().window;
 const MADE_AT = new Date('2026-01-02T03:04:05.000Z');
@@ -12,18 +12,6 @@ function page(inner: string, width = 595.28, height = 841.89): Element {
   const holder = document.createElement('div');
   holder.innerHTML = `<svg xmlns="http://www.w3.org/2000/svg" width="${width}pt" height="${height}pt" viewBox="0 0 ${width} ${height}" font-family="Bravura, Academico">${inner}</svg>`;
   return holder.firstElementChild!;
-}
-
-async function read(bytes: Uint8Array) {
-  const pdf = await getDocument({ data: new Uint8Array(bytes), useSystemFonts: false, verbosity: 0 }).promise;
-  const texts: string[] = [];
-  const sizes: number[][] = [];
-  for (let n = 1; n <= pdf.numPages; n += 1) {
-    const one = await pdf.getPage(n);
-    sizes.push(one.view);
-    texts.push((await one.getTextContent()).items.map((item) => ('str' in item ? item.str : '')).join(''));
-  }
-  return { texts, sizes, labels: await pdf.getPageLabels(), info: (await pdf.getMetadata()).info as Record<string, unknown> };
 }
 
 const TITLE = 'Lock – Плотина Ωmega';
@@ -37,9 +25,9 @@ describe('a print as PDF', () => {
   it('has the pages in their sizes, its text as text in any alphabet of the faces, and what it is', async () => {
     const bytes = await writePdf(pages(), { title: TITLE, author: 'Iva Towpath', label: 'Player 1', madeAt: MADE_AT });
     if (process.env.SESQUI_LOOK) fs.writeFileSync(process.env.SESQUI_LOOK, bytes);
-    const { texts, sizes, labels, info } = await read(bytes);
+    const { texts, sizes, labels, info } = await readPdf(bytes);
     expect(sizes.map((box) => box.slice(2).map(Math.round))).toEqual([[595, 842], [612, 792]]);
-    expect(texts[0]).toContain(TITLE);
+    expect(texts[0]?.replaceAll(' ', '')).toContain(TITLE.replaceAll(' ', ''));
     expect(texts[0]).toContain('with a hard stick');
     expect(texts[0]).toContain('= 84');
     expect(texts[1]).toBe('Second');

@@ -1,5 +1,6 @@
 import { getDatabase } from '@/db/client';
 import { getStudy } from '@/db/queries/studies';
+import { AppError } from '@/lib/errors';
 import { exportBody, exportResponse } from '@/lib/schemas/exports';
 import { exportItemOf, orderExport } from '@/lib/server/exports/answers';
 import { ownerOf } from '@/lib/server/exports/asker';
@@ -13,9 +14,10 @@ import { withPublic } from '@/lib/server/with-access';
 
 // POST /api/exports: asks for a print of a document, or of a saved study; the same again, while it is kept, is the same print
 export const POST = withPublic('POST /api/exports', async ({ req, body, user }) => {
-  const { what, player, document, study: id, ...page } = exportBody.parse(body);
+  const { what, player, document, study: id, version, ...page } = exportBody.parse(body);
   const saved = id === undefined ? undefined : await getStudy(getDatabase(), { id, userId: user?.id ?? null });
   if (id !== undefined && !saved) throw noStudy();
+  if (saved && version !== undefined && version !== saved.version) throw new AppError('version_conflict', `This study is at version ${saved.version} now. Open it again, or send the document.`);
   const study = saved?.document ?? readDocument(document);
   if (player !== undefined) playerOf(study, player);
   const options = exportOptions(what, page, player);
