@@ -27,8 +27,10 @@ function readSymbols(reader: VerovioToolkit, musicXML: string): Map<string, Read
   return notes;
 }
 
+type StruckNote = ReadNote & { readonly id: string };
+
 /** What is struck, in order: the ties are those the reader has in its own MEI, whatever the file calls its notes. */
-export function readStruck(reader: VerovioToolkit, musicXML: string): ReadNote[] {
+function struckNotes(reader: VerovioToolkit, musicXML: string): StruckNote[] {
   const notes = readSymbols(reader, musicXML);
   const next = new Map<string, string>();
   for (const [tie] of reader.getMEI().matchAll(/<tie [^>]*>/g)) {
@@ -40,14 +42,31 @@ export function readStruck(reader: VerovioToolkit, musicXML: string): ReadNote[]
     next.set(from, to);
   }
   const continued = new Set(next.values());
-  const struck: ReadNote[] = [];
+  const struck: StruckNote[] = [];
   for (const [id, { on }] of notes) {
     if (continued.has(id)) continue;
     let last = id;
     for (let to = next.get(last); to !== undefined; to = next.get(last)) last = to;
-    struck.push({ on, off: notes.get(last)?.off ?? NaN });
+    struck.push({ id, on, off: notes.get(last)?.off ?? NaN });
   }
   return struck.sort((a, b) => a.on - b.on);
+}
+
+/** What is struck, in order. */
+export const readStruck = (reader: VerovioToolkit, musicXML: string): ReadNote[] => struckNotes(reader, musicXML).map(({ on, off }) => ({ on, off }));
+
+/** What is struck on each staff, by the number of the staff from 1, in order. */
+export function readStaves(reader: VerovioToolkit, musicXML: string): Map<number, ReadNote[]> {
+  const struck = struckNotes(reader, musicXML);
+  const staffOf = new Map<string, number>();
+  let staff = 0;
+  for (const [tag] of reader.getMEI().matchAll(/<(?:staff|note)\b[^>]*>/g)) {
+    if (tag.startsWith('<staff')) staff = Number(/\bn="(\d+)"/.exec(tag)?.[1]);
+    else staffOf.set(/xml:id="([^"]+)"/.exec(tag)?.[1] ?? '', staff);
+  }
+  const staves = new Map<number, ReadNote[]>();
+  for (const { id, on, off } of struck) staves.set(staffOf.get(id) ?? 0, [...(staves.get(staffOf.get(id) ?? 0) ?? []), { on, off }]);
+  return staves;
 }
 
 /** The brackets that the reader's own MEI has round a note, from outside in. */

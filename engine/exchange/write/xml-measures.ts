@@ -39,28 +39,27 @@ function attributesElement(measure: PrintMeasure, divisions: bigint, lines: numb
   );
 }
 
-/** Directions put among the notes: each before the note that begins where it stands, or with an offset from the one before. */
-function interleave(notes: readonly { readonly at: Fraction; readonly xml: string }[], directions: readonly Direction[], divisions: bigint): string {
+/**
+ * Directions put among the notes: before the note that they stand over, by their offset from its beginning; what stands at the
+ * measure's end comes last, where the reader has arrived there.
+ */
+function interleave(notes: readonly { readonly at: Fraction; readonly xml: string }[], directions: readonly Direction[], length: Fraction, divisions: bigint): string {
   const sorted = directions.toSorted((a, b) => a.offset.compare(b.offset) || a.order - b.order);
   const parts: string[] = [];
   let next = 0;
-  let last: Fraction = ZERO;
-  const say = (until: Fraction | null): void => {
-    for (; next < sorted.length && (until === null || sorted[next]!.offset.compare(until) <= 0); next += 1) {
+  const say = (from: Fraction, until: Fraction | null): void => {
+    for (; next < sorted.length && (until === null || sorted[next]!.offset.compare(until) < 0); next += 1) {
       const { offset, xml } = sorted[next]!;
-      const away = inDivisions(offset.sub(last), divisions);
+      const away = inDivisions(offset.sub(from), divisions);
       // The offset comes after the kinds of direction and before the sound.
       parts.push(away === 0n ? xml : xml.replace('</direction-type>', `</direction-type><offset>${away}</offset>`));
     }
   };
-  for (const { at, xml } of notes) {
-    // What lies within a note is said at its beginning, by how far it is from there.
-    if (next < sorted.length && sorted[next]!.offset.compare(at) < 0) say(at);
-    last = at;
-    say(at);
+  notes.forEach(({ at, xml }, index) => {
+    say(at, notes[index + 1]?.at ?? length);
     parts.push(xml);
-  }
-  say(null);
+  });
+  say(length, null);
   return parts.join('');
 }
 
@@ -95,7 +94,7 @@ export function partMeasures(score: PrintScore, staff: PrintStaff, instruments: 
         'measure',
         { number: measure.number, implicit: isPickup ? 'yes' : undefined },
         attributesElement(measure, divisions, changed),
-        interleave(notes, directions, divisions),
+        interleave(notes, directions, measure.length.div(measure.scale), divisions),
         isLast ? element('barline', { location: 'right' }, textElement('bar-style', 'light-heavy')) : '',
       );
     })
