@@ -10,6 +10,7 @@ import { studyListQuery } from '@/lib/client/studies-queries';
 import { Button } from '../ui/button';
 import { Failed } from '../ui/failed';
 import { PageHeading } from '../ui/page-heading';
+import { OpenStudyFile } from '../bring-in/open-study-file';
 import { OwnStudies } from './own-studies';
 import { StudyRow } from './study-row';
 
@@ -46,9 +47,12 @@ export function StudiesList({ isSignedIn }: { isSignedIn: boolean }) {
   return (
     <main className="mx-auto max-w-[1100px] px-5 pb-20 pt-10 sm:px-8">
       <PageHeading text="Studies">
-        <Button kind="strong" onClick={begin}>
-          Start a study
-        </Button>
+        <span className="flex flex-wrap items-baseline gap-x-5 gap-y-2">
+          <OpenStudyFile onUnkept={() => setProblem(true)} />
+          <Button kind="strong" onClick={begin}>
+            Start a study
+          </Button>
+        </span>
       </PageHeading>
       {problem && (
         <p role="alert" className="mt-3 text-mark">

@@ -4,6 +4,7 @@ import Link from 'next/link';
 import { type ReactNode, useEffect, useMemo, useState, useSyncExternalStore } from 'react';
 import { describeSection } from '@/engine';
 import { DRAWN_MARK, type StudyEditor as Editor } from '@/lib/client/study-editor';
+import { BringInPanel } from '../bring-in/bring-in-panel';
 import { type Selection, StudyContext, type StudyContextValue, subjectOf, useValueNames } from './context';
 import { FormStrip } from './form-strip';
 import { InstrumentsPanel } from './instruments-panel';
@@ -103,6 +104,7 @@ export function StudyEditorView({ editor, status }: { editor: Editor; status: Re
           <ThreadsView />
         </div>
         <SubjectPanel />
+        <BringInPanel />
         <ScorePanel onSeek={onSeek} />
         <StatementTable />
         <InstrumentsPanel />
