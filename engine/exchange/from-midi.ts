@@ -14,8 +14,8 @@ import type { Candidate, ReadOptions } from './types';
 /**
  * The rhythms of a Standard MIDI File of format 0 or 1: one candidate for each channel that strikes anything in each track.
  * Ticks are exact fractions of a quarter; nothing is quantised. Attacks of one moment are one attack; a note that overlaps the
- * next is cut there; silence between is a rest. The keys of the percussion channel are sounds, numbered from the lowest, where
- * there are from 2 to 12; pitches of other channels are left out. `holdToNext` gives lengths to the next attack.
+ * next is cut there; silence between is a rest. The keys of the percussion channel are sounds, numbered from the lowest as General
+ * MIDI has them, where there are from 2 to 12; pitches of other channels are left out. `holdToNext` gives lengths to the next attack.
  * @throws EngineError `unreadable_music` with the byte, `too_large`, `too_fine`, `out_of_time`
  */
 export async function fromMidi(input: Uint8Array | ArrayBuffer, options: ReadOptions = {}): Promise<Candidate[]> {

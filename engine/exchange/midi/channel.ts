@@ -3,6 +3,7 @@ import { LIMITS } from '../../limits';
 import type { Value } from '../../rhythm/types';
 import { type Struck, assembleRhythm } from '../assemble';
 import type { Odd } from '../odd';
+import { byHeight } from './heights';
 import type { MidiEvent } from './read-midi';
 
 type Note = { readonly at: number; end: number; keys: number[] };
@@ -63,15 +64,15 @@ export function channelRhythm(events: readonly MidiEvent[], channel: number, tra
   const read = notesOf(events, channel, trackEnd, odd);
   if (read.length === 0) return null;
   const notes = cutShort(read, trackEnd, odd);
-  const keys = [...new Set(notes.flatMap((note) => note.keys))].sort((a, b) => a - b);
+  const keys = [...new Set(notes.flatMap((note) => note.keys))].sort(byHeight);
   const hasSounds = channel === PERCUSSION && keys.length > 1 && keys.length <= LIMITS.sounds;
   if (channel !== PERCUSSION && keys.length > 1) odd.note('Pitches were left out');
   if (channel === PERCUSSION && keys.length > LIMITS.sounds) odd.note(`The sounds were left out: the channel has ${keys.length}, and ${LIMITS.sounds} are the limit`);
-  if (hasSounds) odd.note(`Its ${keys.length} keys became sounds, numbered from the lowest key`);
+  if (hasSounds) odd.note(`Its ${keys.length} keys became sounds, numbered from the lowest`);
   if (hasSounds && notes.some((note) => new Set(note.keys).size > 1)) odd.note('Of sounds struck together the lowest was taken');
   if (areShort(notes)) odd.note('Every note ends before the next begins, as files of percussion often have it: each can be held to the next attack instead');
   const end = endOf(notes, trackEnd, ticksPerWhole);
   const place = (tick: number) => (tick === 0 ? ZERO : new Fraction(tick, ticksPerWhole));
-  const struck = notes.map((note): Struck => ({ start: place(note.at), end: place(note.end), ...(hasSounds && { sound: keys.indexOf(Math.min(...note.keys)) + 1 }) }));
+  const struck = notes.map((note): Struck => ({ start: place(note.at), end: place(note.end), ...(hasSounds && { sound: Math.min(...note.keys.map((key) => keys.indexOf(key))) + 1 }) }));
   return { rhythm: assembleRhythm(struck, place(end)), end };
 }

@@ -16,7 +16,7 @@ type Listed = { readonly name: string; readonly declared: Declared };
 
 function listed(node: XmlNode): Listed {
   const midi = new Map(childrenOf(node, 'midi-instrument').map((one) => [one.attributes.id, Number(textIn(one, 'midi-unpitched') ?? -1)]));
-  const declared = new Map(childrenOf(node, 'score-instrument').map(({ attributes: { id = '' } }) => [id, { midi: midi.get(id) ?? -1 }]));
+  const declared = new Map(childrenOf(node, 'score-instrument').map((one) => [one.attributes.id ?? '', { name: textIn(one, 'instrument-name') ?? '', midi: midi.get(one.attributes.id) ?? -1 }]));
   return { name: shown(childOf(node, 'part-name')?.text ?? '', LIMITS.name), declared };
 }
 

@@ -48,7 +48,22 @@ function tiesJoined(events: readonly NoteEvent[], odd: Odd): NoteEvent[] {
 }
 
 /** Instruments of a part, in the order in which it names them. */
-export type Declared = ReadonlyMap<string, { readonly midi: number }>;
+export type Declared = ReadonlyMap<string, { readonly name: string; readonly midi: number }>;
+
+/**
+ * Where every note is of one instrument that the part lists with several sounds, under one name, from the lowest: a sound's
+ * number is its place in that list, whichever of them the voice uses.
+ */
+function listedSounds(keys: readonly NoteKey[], declared: Declared): ((key: NoteKey) => number) | null {
+  const used = new Map(keys.map((key) => [key.instrument ?? '', key]));
+  const names = new Set([...used.keys()].map((id) => declared.get(id)?.name));
+  const [name] = names;
+  if (names.size !== 1 || !name) return null;
+  const list = [...declared].filter(([, one]) => one.name === name).map(([id]) => id);
+  if (list.length < 2 || list.length > LIMITS.sounds) return null;
+  const places = list.flatMap((id) => used.get(id)?.place ?? []);
+  return places.every((place, index) => index === 0 || place > places[index - 1]!) ? ({ instrument }) => list.indexOf(instrument ?? '') + 1 : null;
+}
 
 /** Numbers of the sounds that a voice uses, 1 the lowest; null where it uses one, has pitches, or uses too many. */
 function soundsOf(events: readonly NoteEvent[], declared: Declared, odd: Odd): ((key: NoteKey) => number) | null {
@@ -57,6 +72,8 @@ function soundsOf(events: readonly NoteEvent[], declared: Declared, odd: Odd): (
     odd.note('Pitches were left out');
     return null;
   }
+  const listed = listedSounds(keys, declared);
+  if (listed) return keys.some((key) => listed(key) > 1) ? listed : null;
   const byInstrument = new Set(keys.map(({ instrument }) => instrument)).size > 1;
   const nameOf = (key: NoteKey) => (byInstrument ? (key.instrument ?? '') : String(key.place));
   const order = [...declared.keys()];

@@ -40,7 +40,7 @@ const FAMILY: Readonly<Record<Instrument['family'], readonly number[]>> = {
   skin: [35, 36, 41, 43, 45, 47, 48, 50, 64, 63, 61, 60],
   wood: [64, 63, 61, 60, 77, 76, 66, 65, 68, 67, 37, 75],
   metal: [52, 57, 49, 59, 51, 55, 53, 56, 68, 67, 80, 81],
-  found: [41, 43, 64, 63, 77, 76, 68, 67, 56, 37, 54, 75],
+  found: [41, 43, 64, 63, 77, 76, 56, 68, 67, 37, 54, 75],
 };
 
 export const soundName = (text: string): string => text.trim().toLowerCase().replace(/[\s_]+/g, '-').replace(/s$/, '');

@@ -1,6 +1,9 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { EngineError, Fraction, type Rhythm, type Value, attacks, formatRhythm, fromMidi, fromMusicXML, parseMetre, readMusic, spellLine, totalLength } from '@/engine';
+import { demoStudies } from '@/db/demo';
+import {
+  EngineError, type Family, Fraction, type Rhythm, type Value, attacks, buildStudy, formatRhythm, fromMidi, fromMusicXML, midiDivision, parseMetre, parseStudy, readMusic, spellLine, toMidi, toMusicXML, totalLength,
+} from '@/engine';
 import { attributes, bytesOf, metreEvent, midi, midiTrack, musicXML, mxl, note, rest, tempoEvent } from '../../helpers/music-files';
 import { spelledMusicXML } from '../../helpers/spelled-musicxml';
 import { METRES, mixedRhythm } from '../notation/arbitrary-line';
@@ -51,6 +54,79 @@ describe('what is written comes back', () => {
         expect(formatRhythm((await fromMidi(bytes))[0]!.rhythm)).toBe(asRead(rhythm));
       }),
     );
+  });
+});
+
+/** A study of one free line on an instrument of twelve sounds. */
+const studyOf = (rhythm: Rhythm, metre: string, family: Family = 'skin', sounds = 12) =>
+  parseStudy({
+    title: 'Weir', metre, tempo: { beat: '1/4', perMinute: '84' },
+    instruments: [{ id: 'x', name: 'Sluice boards', family, sounds }],
+    sections: [{ id: 'a', name: 'A', role: 'episode', kind: 'free', lines: [{ instrument: 'x', rhythm: formatRhythm(rhythm) }] }],
+  });
+/** Accent, roll and sound as paper tells them: rests have none, the first sound is that of a note without a number. */
+const marks = (rhythm: Rhythm) => rhythm.filter(({ rest: isRest }) => !isRest).map(({ accent, roll, sound }) => [accent, roll, sound ?? 1]);
+const FAMILIES = ['metal', 'wood', 'skin', 'found'] as const;
+
+describe('what toMusicXML and toMidi write comes back', () => {
+  it('MusicXML: lengths, tuplets, ties, accents, rolls and sounds; metre and tempo', async () => {
+    let read = 0;
+    await fc.assert(
+      fc.asyncProperty(fc.oneof(mixedRhythm, arbitraryRhythm).filter(strikes), fc.constantFrom(...METRES), async (rhythm, metre) => {
+        const study = studyOf(rhythm, metre);
+        let text;
+        try {
+          text = toMusicXML(study);
+        } catch (error) {
+          if (error instanceof EngineError && error.code === 'unspellable') return;
+          throw error;
+        }
+        const [candidate] = await fromMusicXML(text);
+        const { length } = parseMetre(metre);
+        expect(asRead(candidate!.rhythm)).toBe(asRead(rhythm, length.mul(totalLength(rhythm).div(length).ceil())));
+        expect(marks(candidate!.rhythm)).toEqual(marks(rhythm));
+        expect([candidate!.name, candidate!.metre, candidate!.tempo]).toEqual(['Sluice boards', parseMetre(metre).text, { beat: '1/4', perMinute: '84' }]);
+        // The metre says its groups; where it says none, customary ones are meant by writer and reader alike.
+        expect(candidate!.warnings).toEqual([]);
+        read += 1;
+      }),
+      { numRuns: 150 },
+    );
+    expect(read).toBeGreaterThan(50);
+  });
+
+  it('MIDI: lengths and, where all of them are used, sounds; metre and tempo', async () => {
+    await fc.assert(
+      fc.asyncProperty(arbitraryRhythm.filter(strikes), fc.constantFrom(...METRES), async (rhythm, metre) => {
+        const study = studyOf(rhythm, metre);
+        if (!midiDivision(study).exact) return;
+        const [candidate] = await fromMidi(toMidi(study));
+        expect(asRead(candidate!.rhythm)).toBe(asRead(rhythm));
+        const used = [...new Set(marks(rhythm).map(([, , sound]) => sound as number))].sort((a, b) => a - b);
+        if (used.length > 1) expect(candidate!.rhythm.flatMap(({ sound }) => sound ?? [])).toEqual(marks(rhythm).map(([, , sound]) => used.indexOf(sound as number) + 1));
+        expect([candidate!.name, candidate!.tempo.perMinute, parseMetre(candidate!.metre).count]).toEqual(['Sluice boards', '84', parseMetre(metre).count]);
+      }),
+    );
+  });
+
+  it.each(FAMILIES.flatMap((family) => Array.from({ length: 11 }, (_, n) => [family, n + 2] as const)))('sounds of %s, %s of them, in their order', async (family, sounds) => {
+    const rhythm = Array.from({ length: sounds }, (_, n) => ({ length: new Fraction(1, 4), rest: false, sound: n + 1 }));
+    const study = studyOf(rhythm, '4/4', family, sounds);
+    for (const [candidate] of [await fromMidi(toMidi(study)), await fromMusicXML(toMusicXML(study))]) expect(marks(candidate!.rhythm.slice(0, sounds))).toEqual(marks(rhythm));
+  });
+
+  it.each(demoStudies.map(({ slug, study }) => [slug, study] as const))('every line of %s', async (_, input) => {
+    const built = buildStudy(parseStudy(input));
+    const lines = new Map(built.lines.map(({ instrument, rhythm }) => [parseStudy(input).instruments.find(({ id }) => id === instrument)!.name, rhythm]));
+    const xml = await fromMusicXML(mxl(toMusicXML(input)));
+    expect(xml.map(({ name }) => name).sort()).toEqual([...lines.keys()].sort());
+    for (const { name, rhythm } of [...xml, ...(await fromMidi(toMidi(input)))]) {
+      const line = lines.get(name)!;
+      // A stretch that is written as another tempo has other lengths on paper; its attacks are as many.
+      expect([name, attacks(rhythm).length]).toEqual([name, attacks(line).length]);
+      const sections = parseStudy(input).sections;
+      if (sections.every(({ writing }) => writing === undefined || writing === 'values')) expect([name, attacks(rhythm).map((at) => at.toFraction())]).toEqual([name, attacks(line).map((at) => at.toFraction())]);
+    }
   });
 });
 

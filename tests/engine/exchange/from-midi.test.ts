@@ -12,8 +12,8 @@ describe('lengths, in ticks, exact', () => {
     ['gaps are rests, before the first too', [[Q, Q / 2], [2 * Q, Q]], '(1/4) 1/8 (1/8) 1/4'],
     ['triplets and quintuplets', [[0, 160], [160, 160], [320, 160], [480, 96], [576, 384]], '1/12 1/12 1/12 1/20 1/5'],
     ['a tick is a tick', [[0, 479], [480, 481]], '479/1920 (1/1920) 481/1920'],
-    ['struck together, the longest', [[0, Q, 60], [0, 2 * Q, 61], [2 * Q, Q, 60]], '1/2@1 1/4@1'],
-    ['overlapping, the later cuts the earlier', [[0, 2 * Q, 60], [Q, Q, 61]], '1/4@1 1/4@2'],
+    ['struck together, the longest', [[0, Q, 36], [0, 2 * Q, 38], [2 * Q, Q, 36]], '1/2@1 1/4@1'],
+    ['overlapping, the later cuts the earlier', [[0, 2 * Q, 36], [Q, Q, 38]], '1/4@1 1/4@2'],
     ['no length, to the next', [[0, 0], [Q, Q]], '1/4 1/4'],
     ['silence to the end of the track', [[0, Q]], '1/4 (3/4)', 4 * Q],
     ['a tick more at the end is no rest', [[0, Q], [Q, Q]], '1/4 1/4', 2 * Q + 1],
@@ -35,9 +35,12 @@ describe('tracks, channels, sounds', () => {
     const hits = [[0, Q, 42], [Q, Q, 36], [2 * Q, Q, 38], [3 * Q, Q, 42]] as const;
     const drums = await one(midi([midiTrack(hits)]));
     expect(formatRhythm(drums.rhythm)).toBe('1/4@3 1/4@1 1/4@2 1/4@3');
-    expect(drums.warnings).toContain('Its 3 keys became sounds, numbered from the lowest key.');
+    expect(drums.warnings).toContain('Its 3 keys became sounds, numbered from the lowest.');
     const bells = await one(midi([midiTrack(hits.map(([at, length, key]) => [at, length, key, 3] as const))]));
     expect([formatRhythm(bells.rhythm), bells.warnings[0]]).toEqual(['1/4 1/4 1/4 1/4', 'Pitches were left out.']);
+  });
+  it('the lower of a pair is what General MIDI calls the lower: its key may be the higher', async () => {
+    expect(formatRhythm((await one(midi([midiTrack([[0, Q, 60], [Q, Q, 61], [2 * Q, Q, 76], [3 * Q, Q, 77]])]))).rhythm)).toBe('1/4@2 1/4@1 1/4@4 1/4@3');
   });
   it('more than 12 keys are left out, and told', async () => {
     const { rhythm, warnings } = await one(midi([midiTrack(Array.from({ length: 13 }, (_, n) => [n * Q, Q, 36 + n] as const))]));

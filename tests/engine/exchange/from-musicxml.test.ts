@@ -53,6 +53,7 @@ describe('marks and sounds', () => {
     ['instruments, by place first', [unpitched('E', 4, '<instrument id="x"/>'), unpitched('C', 4, '<instrument id="y"/>')], '', '1/4@2 1/4@1'],
     ['instruments on one line, by key', [unpitched('E', 4, '<instrument id="x"/>'), unpitched('E', 4, '<instrument id="y"/>')], '<score-instrument id="x"/><score-instrument id="y"/><midi-instrument id="x"><midi-unpitched>50</midi-unpitched></midi-instrument><midi-instrument id="y"><midi-unpitched>48</midi-unpitched></midi-instrument>', '1/4@2 1/4@1'],
     ['instruments on one line, as they are listed', [unpitched('E', 4, '<instrument id="x"/>'), unpitched('E', 4, '<instrument id="y"/>')], '<score-instrument id="y"/><score-instrument id="x"/>', '1/4@2 1/4@1'],
+    ['one instrument of several sounds, numbered as it lists them, whichever are used', [unpitched('A', 4, '<instrument id="b"/>'), unpitched('E', 5, '<instrument id="d"/>')], ['a', 'b', 'c', 'd'].map((id) => `<score-instrument id="${id}"><instrument-name>Tom-toms</instrument-name></score-instrument>`).join(''), '1/4@2 1/4@4'],
     ['struck together, the lowest', [unpitched('E', 4), `${unpitched('C', 5)}${unpitched('C', 4, '').replace('<note>', '<note><chord/>')}`], '', '1/4@2 1/4@1'],
   ])('%s', async (_, notes, listed, expected) => {
     const [found] = await fromMusicXML(musicXML([A + notes.join('')], { listed }));
@@ -116,6 +117,7 @@ describe('metre, tempo and measures', () => {
   it.each([
     ['<direction-type><metronome><beat-unit>quarter</beat-unit><beat-unit-dot/><per-minute>84</per-minute></metronome></direction-type><sound tempo="126"/>', { beat: '3/8', perMinute: '84' }],
     ['<direction-type><metronome><beat-unit>quarter</beat-unit><per-minute>about 84</per-minute></metronome></direction-type><sound tempo="84.5"/>', { beat: '1/4', perMinute: '169/2' }],
+    ['<direction-type><metronome><beat-unit>quarter</beat-unit><beat-unit-tied><beat-unit>16th</beat-unit></beat-unit-tied><per-minute>67 1/5</per-minute></metronome></direction-type>', { beat: '5/16', perMinute: '336/5' }],
     ['<direction-type><metronome><beat-unit>quarter</beat-unit><beat-unit>half</beat-unit></metronome></direction-type>', { beat: '1/4', perMinute: '120' }],
   ])('%s', async (inside, tempo) => {
     expect((await one(`${A}<direction>${inside}</direction>${note(48)}`)).tempo).toEqual(tempo);
