@@ -1,11 +1,13 @@
 'use client';
 
 import Link from 'next/link';
-import { type ReactNode, useContext, useRef, useState } from 'react';
-import type { ThreadReading } from '@/engine';
+import { type ReactNode, useContext, useEffect, useRef, useState } from 'react';
+import type { Study, ThreadReading } from '@/engine';
 import { type MadeFile, print } from '@/lib/client/exports';
 import { ApiError } from '@/lib/client/get-json';
+import { midiWords, musicBlob } from '@/lib/client/music-in-thread';
 import { fileName } from '@/lib/file-names';
+import type { MusicKind } from '@/lib/music-files';
 import type { ExportBody } from '@/lib/schemas/exports';
 import { TextButton } from '../ui/button';
 import { Token } from '../ui/token';
@@ -57,6 +59,17 @@ function Standing({ work, cancel }: { work: Work; cancel: () => void }) {
   );
 }
 
+/** How exact a MIDI file of the study is; empty until that is known. */
+function MidiExactness({ study }: { study: Study }) {
+  const [said, setSaid] = useState('');
+  useEffect(() => {
+    const control = new AbortController();
+    midiWords(study, control.signal).then(setSaid, () => undefined);
+    return () => control.abort();
+  }, [study]);
+  return <p className="min-h-5 text-[13px] text-soft">{said}</p>;
+}
+
 /** Everything that can be taken along of the study as it stands on the page. */
 export function ExportMenu() {
   const { editor, state, selection } = useStudy();
@@ -88,13 +101,23 @@ export function ExportMenu() {
   };
   const formOf = (kind: 'svg' | 'png') => drawn((measure) => formPicture(state, measure), [study.title, 'form'], kind);
   const threadsOf = (kind: 'svg' | 'png') => drawn((measure) => threadsPicture(state, section.id, reading, measure, valueNames), [study.title, section.name, 'threads'], kind);
-  const json: Make = () => textFile(`${JSON.stringify(study, null, 2)}\n`, 'application/json', fileName([study.title], 'json'));
-
   const word = (text: string, what: string, make: Make) => (
     <TextButton aria-disabled={isBusy} className="aria-disabled:text-soft aria-disabled:no-underline" aria-label={what} onClick={() => run(what, make)}>
       {text}
     </TextButton>
   );
+  const written = (kind: MusicKind, player?: { readonly id: string; readonly name: string }): Make => async (_, signal) => ({
+    blob: await musicBlob(study, kind, player?.id, signal),
+    name: fileName([study.title, player?.name ?? ''], kind),
+  });
+  const musicXml = (what: string, player?: { readonly id: string; readonly name: string }) => (
+    <>
+      {word('MusicXML', `${what} as MusicXML`, written('musicxml', player))}
+      {word('compressed', `${what} as compressed MusicXML`, written('mxl', player))}
+    </>
+  );
+  const json: Make = () => textFile(`${JSON.stringify(study, null, 2)}\n`, 'application/json', fileName([study.title], 'json'));
+
   const pair = (what: string, make: (kind: 'svg' | 'png') => Make) => (
     <>
       {word('SVG', `${what} as SVG`, make('svg'))}
@@ -123,6 +146,18 @@ export function ExportMenu() {
               </Link>
             </p>
           </Group>
+          <Group heading="For notation programs">
+            <Row name="Score">{musicXml('Score')}</Row>
+            {study.players.map((player) => (
+              <Row key={player.id} name={player.name}>
+                {musicXml(`Part of ${player.name}`, player)}
+              </Row>
+            ))}
+          </Group>
+          <Group heading="MIDI">
+            <Row name="Standard MIDI File">{word('MIDI', 'MIDI file', written('mid'))}</Row>
+            <MidiExactness study={study} />
+          </Group>
           <Group heading="Pictures">
             <Row name="Form">{pair('Form', formOf)}</Row>
             <Row name={`Threads of “${section.name}”`}>
@@ -135,6 +170,9 @@ export function ExportMenu() {
               </select>
               {pair('Threads', threadsOf)}
             </Row>
+          </Group>
+          <Group heading="Table of statements">
+            <Row name="Section, instrument, measures, times, factor, reading">{word('CSV', 'Statements as CSV', written('csv'))}</Row>
           </Group>
           <Group heading="The study itself">
             <Row name="Everything, to open again">{word('JSON', 'The study as JSON', json)}</Row>

@@ -9,19 +9,18 @@ export const exportState = pgEnum('export_state', ['queued', 'running', 'done', 
 const bytea = customType<{ data: Uint8Array; driverData: Buffer }>({ dataType: () => 'bytea', toDriver: (bytes) => Buffer.from(bytes) });
 const moment = () => timestamp({ withTimezone: true, precision: 3 });
 
-/** What a print asks for besides the study. */
+/** What is asked for besides the study. */
 export type ExportOptions = {
   readonly what: 'score' | 'part' | 'parts';
+  readonly as: 'pdf' | 'musicxml' | 'mxl' | 'mid' | 'csv';
   /** id of the player whose part it is */
   readonly player?: string | undefined;
-  readonly paper: 'a4' | 'letter';
-  readonly orientation: 'portrait' | 'landscape';
-  /** millimetres */
-  readonly staff: number;
+  /** how a print is laid out; `staff` in millimetres. Other files have no pages */
+  readonly page?: { readonly paper: 'a4' | 'letter'; readonly orientation: 'portrait' | 'landscape'; readonly staff: number } | undefined;
 };
 
 /**
- * Prints that take longer than an answer may: asked for, being made, made. One is somebody's own, or a guest's who holds its
+ * Prints and other files that take longer than an answer may: asked for, being made, made. One is somebody's own, or a guest's who holds its
  * token, or of a demo study and then anybody's. The study is a saved version, or the document itself until the job ends.
  */
 export const exportJobs = pgTable(

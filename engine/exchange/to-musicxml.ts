@@ -41,7 +41,7 @@ export function toMusicXML(document: StudyInput, { part }: { part?: string } = {
   const study = parseStudy(document);
   const score = printScore(study, buildStudy(study), part === undefined ? {} : { part });
   const [failure] = score.failures;
-  if (failure !== undefined) throw failure.error;
+  if (failure !== undefined) throw new EngineError(failure.error.code, `${failure.instrument.name}: ${failure.error.message}`);
   if (score.staves.length === 0) throw new EngineError('cannot_write', part === undefined ? 'There is no instrument in this study to write a part for.' : `${score.part!.name} has no instrument to write a part for.`);
   const divisions = divisionsOf(score);
   const parts = score.staves.map((staff, index) => `<part id="${partId(index)}">\n${partMeasures(score, staff, scoreInstruments(partId(index), staff), divisions, index === 0)}\n</part>`);

@@ -27,10 +27,10 @@ export const partParams = studyParams.extend({
   file: z
     .string()
     .max(LIMITS.id + 12)
-    .regex(/^.+\.(?:pdf)$/su, 'A part comes as .pdf.')
+    .regex(/^.+\.(?:pdf|musicxml|mxl)$/su, 'A part comes as .pdf, .musicxml or .mxl.')
     .transform((file) => {
       const at = file.lastIndexOf('.');
-      return { player: file.slice(0, at), kind: file.slice(at + 1) as 'pdf' };
+      return { player: file.slice(0, at), kind: file.slice(at + 1) as 'pdf' | 'musicxml' | 'mxl' };
     }),
 });
 

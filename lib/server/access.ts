@@ -58,6 +58,10 @@ export const ACCESS = {
   'GET /api/studies/[id]/versions/[version]': { who: 'signed-in', rows: 'own or demo' },
 
   'GET /api/studies/[id]/score.json': { who: 'anybody', rows: 'own or demo', rate: 'file' },
+  'GET /api/studies/[id]/score.musicxml': { who: 'anybody', rows: 'own or demo', rate: 'file' },
+  'GET /api/studies/[id]/score.mxl': { who: 'anybody', rows: 'own or demo', rate: 'file' },
+  'GET /api/studies/[id]/score.mid': { who: 'anybody', rows: 'own or demo', rate: 'file' },
+  'GET /api/studies/[id]/statements.csv': { who: 'anybody', rows: 'own or demo', rate: 'file' },
   'GET /api/studies/[id]/score.pdf': { who: 'anybody', rows: 'own or demo', rate: 'file' },
   'GET /api/studies/[id]/parts.zip': { who: 'anybody', rows: 'own or demo', rate: 'file' },
   'GET /api/studies/[id]/parts/[file]': { who: 'anybody', rows: 'own or demo', rate: 'file' },

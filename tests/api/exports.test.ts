@@ -4,7 +4,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { demoStudies } from '@/db/demo';
 import type { Database } from '@/db/connect';
 import { createStudy } from '@/db/queries/save-study';
-import { parseStudy, type Study } from '@/engine';
+import { buildStudy, parseStudy, statementsCsv, type Study, toMidi, toMusicXML } from '@/engine';
 import { EXPORT_TOKEN, type ExportWire } from '@/lib/schemas/exports';
 import { BODY_BYTES, RATES } from '@/lib/server/limits';
 import { newAddress, Reader } from '../helpers/api';
@@ -45,6 +45,12 @@ const named = (title: string): Study => ({ ...smallStudy(title), players: [{ id:
 
 const FILES = [
   ['score.json', 'application/json', 'Lock Gates.json'],
+  ['score.musicxml', 'application/vnd.recordare.musicxml+xml', 'Lock Gates.musicxml'],
+  ['score.mxl', 'application/vnd.recordare.musicxml', 'Lock Gates.mxl'],
+  ['score.mid', 'audio/midi', 'Lock Gates.mid'],
+  ['statements.csv', 'text/csv; charset=utf-8', 'Lock Gates.csv'],
+  ['parts/p1.musicxml', 'application/vnd.recordare.musicxml+xml', 'Lock Gates - Player 1.musicxml'],
+  ['parts/p1.mxl', 'application/vnd.recordare.musicxml', 'Lock Gates - Player 1.mxl'],
   ['score.pdf', 'application/pdf', 'Lock Gates.pdf'],
   ['parts/p2.pdf', 'application/pdf', 'Lock Gates - Player 2.pdf'],
   ['parts.zip', 'application/zip', 'Lock Gates - parts.zip'],
@@ -85,6 +91,38 @@ const demoId = async () => (await pool.query<{ id: string }>("select id from stu
 describe('what is in the files', () => {
   it('JSON: the document, whole', async () => {
     expect(JSON.parse((await fetchFile('/api/studies/lock-gates/score.json')).text)).toEqual(lockGates);
+  });
+
+  it('MusicXML, plain and compressed, MIDI and CSV: what the engine writes', async () => {
+    const fetched = async (file: string) => Buffer.from((await fetchFile(`/api/studies/lock-gates/${file}`)).bytes);
+    const plain = await fetched('score.musicxml');
+    expect(plain.equals(Buffer.from(toMusicXML(lockGates)))).toBe(true);
+    expect(Buffer.from(unzipSync(await fetched('score.mxl'))['score.musicxml']!).equals(plain)).toBe(true);
+    expect((await fetched('parts/p4.musicxml')).equals(Buffer.from(toMusicXML(lockGates, { part: 'p4' })))).toBe(true);
+    expect((await fetched('score.mid')).equals(Buffer.from(toMidi(lockGates)))).toBe(true);
+    expect((await fetched('statements.csv')).equals(Buffer.from(statementsCsv(lockGates, buildStudy(lockGates))))).toBe(true);
+  });
+
+  it('CSV: nothing that a spreadsheet would run', async () => {
+    const bad = ['=1+1', '+1', '-1', '@SUM(1)', '\tx'];
+    const sections = bad.map((name, n) => ({ id: `s${n}`, name: `${name}!`, role: 'other', kind: 'free', lines: [{ instrument: 'pots', rhythm: '1/4' }] }));
+    const { reader, study } = await own(parseStudy({ ...named('Formulas'), instruments: [{ id: 'pots', name: '=HYPERLINK("http://elsewhere.example")', family: 'found' }], sections }));
+    const { text } = await fetchFile(`/api/studies/${study}/statements.csv`, { reader });
+    const rows = text.split('\r\n').filter((row) => row !== '');
+    expect(rows.length).toBe(1 + bad.length);
+    for (const row of rows) expect(row.replace('\uFEFF', '')).not.toMatch(/(?:^|,)"?[=+\-@\t\r]/);
+    expect(text).toContain(`"'=HYPERLINK(""http://elsewhere.example"")"`);
+  });
+
+  it('of many values: made apart, and the same', async () => {
+    const lines = ['1/8', '1/4', '1/16'].map((value, n) => ({ instrument: `i${n}`, rhythm: `[${value} ${value}]x2500` }));
+    const instruments = lines.map(({ instrument: id }) => ({ id, name: id, family: 'found' }));
+    const long = parseStudy({ ...smallStudy('Many'), instruments, sections: [{ id: 'a', name: 'A', role: 'other', kind: 'free', lines }] });
+    const { id, reader, study } = await own(long);
+    expect((await fetchFile(`/api/studies/${study}/score.musicxml`, { reader })).text).toBe(toMusicXML(long));
+    expect(Buffer.from((await fetchFile(`/api/studies/${study}/score.mid`, { reader })).bytes).equals(Buffer.from(toMidi(long)))).toBe(true);
+    const { rows } = await pool.query('select state, result_name as name from export_jobs where owner_id = $1 order by created_at', [id]);
+    expect(rows).toEqual([{ state: 'done', name: 'Many.musicxml' }, { state: 'done', name: 'Many.mid' }]);
   });
 
   it('PDF: the score in the size that was asked for, its title as text, the same bytes each time', async () => {
@@ -135,8 +173,10 @@ describe('a file of one’s own study', () => {
   it('that cannot be written says why', async () => {
     const unwritable = { ...named('Odd'), sections: [{ id: 'a', name: 'A', role: 'other', kind: 'free', lines: [{ instrument: 'pots', rhythm: '1/1031 1030/1031' }] }] };
     const { reader, study } = await own(parseStudy(unwritable));
-    const { status, text } = await fetchFile(`/api/studies/${study}/score.pdf`, { reader });
-    expect([status, (JSON.parse(text) as { error: { message: string } }).error.message]).toEqual([422, expect.stringMatching(/^Flower pots: .*cannot be written/)]);
+    for (const file of ['score.pdf', 'score.musicxml', 'score.mxl']) {
+      const { status, text } = await fetchFile(`/api/studies/${study}/${file}`, { reader });
+      expect([file, status, (JSON.parse(text) as { error: { message: string } }).error.message]).toEqual([file, 422, expect.stringMatching(/^Flower pots: .*cannot be written/)]);
+    }
   });
 
   it('has no parts where it has no players', async () => {

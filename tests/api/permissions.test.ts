@@ -120,6 +120,26 @@ const EXPECTED: Record<Route, readonly Case[]> = {
     { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },
     { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: demo },
   ],
+  'GET /api/studies/[id]/score.musicxml': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: study },
+    { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: demo },
+  ],
+  'GET /api/studies/[id]/score.mxl': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: study },
+    { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: demo },
+  ],
+  'GET /api/studies/[id]/score.mid': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: study },
+    { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: demo },
+  ],
+  'GET /api/studies/[id]/statements.csv': [
+    { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: study },
+    { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },
+    { of: 'a demo', statuses: [200, 200, 200, 200, 200, 200, 200], at: demo },
+  ],
   'GET /api/studies/[id]/score.pdf': [
     { of: 'the owner’s', statuses: [404, 404, 404, 404, 404, 200, 404], at: study, changes: 'owner' },
     { of: 'the owner’s, thrown away', statuses: [404, 404, 404, 404, 404, 404, 404], at: gone },

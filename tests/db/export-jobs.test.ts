@@ -19,7 +19,7 @@ afterAll(() => db.drop());
 beforeEach(() => db.pool.query('delete from export_jobs'));
 
 const LIMITS = { own: 10, all: 20 };
-const options = { what: 'score', paper: 'a4', orientation: 'portrait', staff: 5.5 } as const;
+const options = { what: 'score', as: 'pdf', page: { paper: 'a4', orientation: 'portrait', staff: 5.5 } } as const;
 const guest = (name: string): Asker => ({ userId: null, tokenHash: name });
 const NOBODY: Asker = { userId: null, tokenHash: null };
 const file = { bytes: Buffer.from([0, 1, 255]), type: 'application/pdf', name: 'Weir.pdf' };

@@ -1,11 +1,12 @@
 import fs from 'node:fs';
 import type { Download, Page } from '@playwright/test';
 import { unzipSync } from 'fflate';
+import { parseMidi } from 'midi-file';
 import { demoStudies } from '../../db/demo';
 import { parseStudy } from '../../engine';
 import { expect, test } from '../helpers/browser';
 import { readPdf } from '../helpers/read-pdf';
-import { alert, fromNewAddress, openStudy, register } from './open';
+import { fromNewAddress, openStudy, register } from './open';
 
 const lockGates = parseStudy(demoStudies.find(({ slug }) => slug === 'lock-gates')!.study);
 const menu = (page: Page) => page.getByRole('dialog', { name: 'Export' });
@@ -44,6 +45,28 @@ test('everything in the menu is what it says', async ({ page }) => {
   const files = unzipSync(parts.bytes);
   expect(Object.keys(files).sort()).toEqual(lockGates.players.map(({ name }) => `Lock Gates - ${name}.pdf`));
   for (const { name } of lockGates.players) expect((await readPdf(files[`Lock Gates - ${name}.pdf`]!)).texts.join(' ')).toContain(name);
+
+  const shape = (text: string) =>
+    page.evaluate((xml) => {
+      const root = new DOMParser().parseFromString(xml, 'application/xml').documentElement;
+      return { root: root.nodeName, title: root.querySelector('work-title')?.textContent, parts: root.querySelectorAll('score-part').length, measures: root.querySelectorAll('part:first-of-type > measure').length };
+    }, text);
+  const xml = await take(page, 'Score as MusicXML');
+  expect(xml.name).toBe('Lock Gates.musicxml');
+  expect(await shape(xml.text)).toEqual({ root: 'score-partwise', title: 'Lock Gates', parts: lockGates.instruments.length, measures: 77 });
+  const mxl = await take(page, 'Part of Player 2 as compressed MusicXML');
+  expect(mxl.name).toBe('Lock Gates - Player 2.mxl');
+  const packed = unzipSync(mxl.bytes);
+  expect(await shape(new TextDecoder().decode(packed['score.musicxml']))).toMatchObject({ root: 'score-partwise', title: 'Lock Gates' });
+
+  await expect(menu(page).getByText(/^Exact: every attack falls on a tick, [\d,]+ to a quarter\.$/)).toBeVisible();
+  const midi = await take(page, 'MIDI file');
+  expect(midi.name).toBe('Lock Gates.mid');
+  expect(parseMidi(midi.bytes).tracks.length).toBe(lockGates.instruments.length + 1);
+
+  const csv = await take(page, 'Statements as CSV');
+  expect(csv.name).toBe('Lock Gates.csv');
+  expect(csv.text.split('\r\n')[0]).toMatch(/^\uFEFF?Section,Statement,Instrument,/);
 
   const json = await take(page, 'The study as JSON');
   expect(json.name).toBe('Lock Gates.json');
@@ -133,11 +156,22 @@ test('a long print tells how far it is, goes on while the menu is closed, and ca
   await expect(menu(page).getByRole('button', { name: 'The study as JSON' })).toBeEnabled();
 });
 
+test('what cannot be written is said with the reason', async ({ page }) => {
+  const document = { title: 'Odd', metre: '4/4', tempo: { beat: '1/4', perMinute: '60' }, instruments: [{ id: 'pots', name: 'Pots', family: 'found' }], sections: [{ id: 'a', name: 'A', role: 'other', kind: 'free', lines: [{ instrument: 'pots', rhythm: '1/1031 1030/1031' }] }] };
+  await page.addInitScript((text) => localStorage.setItem('sesqui.draft.draft-odd', text), JSON.stringify({ document, baseVersion: null, texts: {}, changedAt: new Date().toISOString() }));
+  await page.goto('/studies/draft-odd');
+  await page.getByRole('button', { name: 'Export', exact: true }).click();
+  for (const what of ['Score as MusicXML', 'Score as PDF']) {
+    await menu(page).getByRole('button', { name: what, exact: true }).click();
+    await expect(menu(page).getByRole('alert')).toHaveText(new RegExp(`^${what}: Pots: .*cannot be written`));
+  }
+});
+
 test('what cannot be made is said in a sentence', async ({ page, complaints }) => {
   await page.route('**/api/exports', (route) => route.abort());
   await openMenu(page);
   await menu(page).getByRole('button', { name: 'Score as PDF' }).click();
-  await expect(alert(page)).toHaveText('Score as PDF: Sesqui cannot be reached. Check the connection and try again.');
+  await expect(menu(page).getByRole('alert')).toHaveText('Score as PDF: Sesqui cannot be reached. Check the connection and try again.');
   complaints.splice(0);
 });
 

@@ -34,7 +34,7 @@ export type Scene = {
 
 /** A print that is made, without printing anything. */
 export async function madePrint(database: Database, by: { ownerId?: string; tokenHash?: string }, name = 'Willow and eel.pdf'): Promise<string> {
-  const options = { what: 'score', paper: 'a4', orientation: 'portrait', staff: 5.5 } as const;
+  const options = { what: 'score', as: 'pdf', page: { paper: 'a4', orientation: 'portrait', staff: 5.5 } } as const;
   const file = { state: 'done', result: Buffer.from('%PDF'), resultType: 'application/pdf', resultName: name, endedAt: new Date() } as const;
   const [row] = await database.insert(exportJobs).values({ ...by, ...file, key: crypto.randomUUID(), options }).returning({ id: exportJobs.id });
   return row!.id;

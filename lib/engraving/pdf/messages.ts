@@ -1,13 +1,17 @@
 import type { Study } from '@/engine';
+import type { MusicKind } from '../../music-files';
 import type { PageOptions } from '../page-options';
 
-/** What a print is asked for with: the score, one player's part, or every part in a zip. */
+/** What is asked for: the score, one player's part, or every part in a zip. */
 export type PrintRequest = {
   readonly study: Study;
   readonly what: 'score' | 'part' | 'parts';
+  /** a print, or one of the files that the engine writes by itself */
+  readonly as: 'pdf' | MusicKind;
   /** id of the player whose part it is */
   readonly player?: string | undefined;
-  readonly options: PageOptions;
+  /** of a print */
+  readonly options?: PageOptions | undefined;
   /** when the music was saved */
   readonly madeAt: Date;
 };

@@ -1,6 +1,8 @@
 import { zipSync } from 'fflate';
 import { buildStudy, EngineError, type PrintScore, printScore, type Study } from '@/engine';
 import { distinctNames, fileName } from '../../file-names';
+import { FILE_TYPES } from '../../file-types';
+import { musicFile, type MusicKind } from '../../music-files';
 import { drawPage } from '../draw-page';
 import type { openNodeEngraver } from '../node-environment';
 import type { PageOptions } from '../page-options';
@@ -32,6 +34,7 @@ function scoreFor(study: Study, player?: string): PrintScore {
 }
 
 async function printOne(engraver: Engraver, { study, options, madeAt }: PrintRequest, player: string | undefined, report: Report): Promise<PrintedFile> {
+  if (options === undefined) throw new Error('A print was asked for without saying on what.');
   const score = scoreFor(study, player);
   const layout = layOutPages(engraver.vf, score, options);
   const total = layout.pages.length;
@@ -42,19 +45,28 @@ async function printOne(engraver: Engraver, { study, options, madeAt }: PrintReq
     await report(done, total);
     await breathe();
   });
-  return { bytes, type: 'application/pdf', name: fileName([study.title, name ?? ''], 'pdf') };
+  return { bytes, type: FILE_TYPES.pdf, name: fileName([study.title, name ?? ''], 'pdf') };
+}
+
+/** What the engine writes by itself, which here keeps nobody waiting. */
+async function write({ study, player }: PrintRequest, as: MusicKind, report: Report): Promise<PrintedFile> {
+  await report(0, 1);
+  await breathe();
+  const part = player === undefined ? undefined : study.players.find(({ id }) => id === player)?.name;
+  return { bytes: musicFile(study, as, player), type: FILE_TYPES[as], name: fileName([study.title, part ?? ''], as) };
 }
 
 /** DOS times, which a zip has, begin with 1980. */
 const zipTime = (madeAt: Date): Date => new Date(Math.max(madeAt.getTime(), Date.UTC(1980, 0, 2)));
 
 /**
- * Prints a study: the score or a part as PDF, or every part in a zip.
+ * Prints a study: the score or a part as PDF, or every part in a zip; or writes it for other programs.
  * @param report - told how many pages, or of several parts parts, are made, and how many there will be
  * @throws EngineError where the study cannot be built or written, or has no such player
  */
 export async function printStudy(engraver: Engraver, request: PrintRequest, report: Report): Promise<PrintedFile> {
-  const { study, what, player, madeAt } = request;
+  const { study, what, as, player, madeAt } = request;
+  if (as !== 'pdf') return write(request, as, report);
   if (what === 'score') return printOne(engraver, request, undefined, report);
   if (what === 'part') return printOne(engraver, request, player, report);
   const total = study.players.length;
@@ -68,5 +80,5 @@ export async function printStudy(engraver: Engraver, request: PrintRequest, repo
   const names = distinctNames(files.map(({ name }) => name));
   // PDFs are compressed already.
   const entries = Object.fromEntries(files.map(({ bytes }, n) => [names[n]!, [bytes, { level: 0 as const, mtime: zipTime(madeAt) }] as const]));
-  return { bytes: zipSync(entries as Parameters<typeof zipSync>[0]), type: 'application/zip', name: fileName([study.title, 'parts'], 'zip') };
+  return { bytes: zipSync(entries as Parameters<typeof zipSync>[0]), type: FILE_TYPES.zip, name: fileName([study.title, 'parts'], 'zip') };
 }

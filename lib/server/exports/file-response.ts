@@ -1,15 +1,5 @@
 import 'server-only';
-
-export const TYPES = {
-  musicxml: 'application/vnd.recordare.musicxml+xml',
-  mxl: 'application/vnd.recordare.musicxml',
-  mid: 'audio/midi',
-  pdf: 'application/pdf',
-  csv: 'text/csv; charset=utf-8',
-  json: 'application/json',
-  zip: 'application/zip',
-} as const;
-export type FileKind = keyof typeof TYPES;
+import { FILE_TYPES, type FileKind } from '../../file-types';
 
 /**
  * How a file is to be kept and called: a plain name for old readers, and the whole name besides.
@@ -38,7 +28,7 @@ export type FileOf = {
 };
 
 const headersOf = ({ kind, name, key, isPublic }: FileOf): Record<string, string> => ({
-  'content-type': TYPES[kind],
+  'content-type': FILE_TYPES[kind],
   'content-disposition': disposition(name),
   etag: `"${key.slice(0, 32)}"`,
   'cache-control': isPublic ? 'public, max-age=0, must-revalidate' : 'private, no-cache',

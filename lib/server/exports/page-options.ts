@@ -1,19 +1,17 @@
 import 'server-only';
 import type { ExportOptions } from '@/db/schema';
-import { STAFF_SIZES, type PageOptions } from '../../engraving/page-options';
+import { STAFF_SIZES } from '../../engraving/page-options';
 
-type Wanted = Omit<ExportOptions, 'staff' | 'what' | 'player'> & { readonly staff?: number | undefined };
+type Page = NonNullable<ExportOptions['page']>;
+type Wanted = Omit<Page, 'staff'> & { readonly staff?: number | undefined };
 
 /** A print with nothing left open: staves of a score are smaller than those of a part, unless somebody chose. */
 export const exportOptions = (what: ExportOptions['what'], { paper, orientation, staff }: Wanted, player?: string): ExportOptions => ({
   what,
+  as: 'pdf',
   ...(player !== undefined && { player }),
-  paper,
-  orientation,
-  staff: staff ?? (what === 'score' ? STAFF_SIZES.score : STAFF_SIZES.part),
+  page: { paper, orientation, staff: staff ?? (what === 'score' ? STAFF_SIZES.score : STAFF_SIZES.part) },
 });
-
-export const pageOptions = ({ paper, orientation, staff }: ExportOptions): PageOptions => ({ paper, orientation, staff });
 
 const day = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'long', year: 'numeric', timeZone: 'UTC' });
 

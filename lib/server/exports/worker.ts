@@ -1,7 +1,7 @@
 import 'server-only';
 import { getDatabase } from '@/db/client';
 import { failExport, finishExport, renewExport, sweepExports, takeExport } from '@/db/queries/export-jobs';
-import { pageOptions, stampOf } from './page-options';
+import { stampOf } from './page-options';
 import { logFault } from '../log-fault';
 import { Engraver, PrintError } from './engraver';
 
@@ -71,7 +71,8 @@ class Worker {
     try {
       if (!job.study) throw new PrintError('not_found', 'The study was thrown away before it could be printed.');
       const { options, study } = job;
-      const request = { study, what: options.what, player: options.player, options: { ...pageOptions(options), stamp: stampOf(job) }, madeAt: job.madeAt };
+      const { what, as, player, page } = options;
+      const request = { study, what, as, player, options: page && { ...page, stamp: stampOf(job) }, madeAt: job.madeAt };
       const { total, ...file } = await this.engraver.print(request, (done, all) => void (progress = { done, total: all }), control.signal);
       await finishExport(getDatabase(), { ...by, file, pages: total });
     } catch (error) {
