@@ -71,7 +71,7 @@ export const LIMITS = {
   /** elements of MusicXML inside each other */
   xmlDepth: 64,
   /** elements of a whole MusicXML file */
-  xmlElements: 4_000_000,
+  xmlElements: 2_000_000,
   /** elements of one note, direction or set of attributes */
   xmlNodes: 20_000,
   /** attributes of one element */

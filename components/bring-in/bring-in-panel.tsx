@@ -69,7 +69,7 @@ export function BringInPanel() {
         </TextButton>
         . A study’s own file (.json) opens as a new study.
       </p>
-      {isPasting && <PasteField onText={(text) => begin(new File([text], 'What was pasted'))} />}
+      {isPasting && <PasteField onText={(text) => begin(new File([text], 'Pasted text'))} />}
       <div role="status" className="text-[14px]">
         {reading.kind === 'reading' && <p className="mt-3">{`Reading ${reading.name}…`}</p>}
         {reading.kind === 'found' && <p className="mt-3">{reading.lines.length === 1 ? `${reading.name} holds one line.` : `${reading.name} holds ${reading.lines.length} lines.`}</p>}

@@ -38,7 +38,7 @@ export function useDrop(onFile: (file: File) => void): boolean {
         return;
       }
       const text = event.clipboardData?.getData('text') ?? '';
-      if (!isField(event.target) && /^\s*[<{]/.test(text)) take(new File([text], 'What was pasted'));
+      if (!isField(event.target) && /^\s*[<{]/.test(text)) take(new File([text], 'Pasted text'));
     };
     window.addEventListener('dragover', over);
     window.addEventListener('dragleave', out);

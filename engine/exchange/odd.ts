@@ -1,16 +1,25 @@
+/** Different remarks that are told of one line. */
+const MOST = 24;
+
 /** What was left out, supposed or found odd while reading, each kind once with the measures that it was found in. */
 export class Odd {
   private readonly found = new Map<string, Set<string>>();
+  private others = 0;
 
   /** @param what - a sentence without its full stop; @param measure - as it is printed */
   note(what: string, measure?: string): void {
     const measures = this.found.get(what) ?? new Set();
+    if (this.found.size >= MOST && !this.found.has(what)) {
+      this.others += 1;
+      return;
+    }
     this.found.set(what, measures);
     if (measure !== undefined) measures.add(measure);
   }
 
   sentences(): string[] {
-    return [...this.found].map(([what, measures]) => (measures.size === 0 ? `${what}.` : `${what} (${whereWords([...measures])}).`));
+    const told = [...this.found].map(([what, measures]) => (measures.size === 0 ? `${what}.` : `${what} (${whereWords([...measures])}).`));
+    return this.others === 0 ? told : [...told, `Much else is odd in this file: ${this.others} more remarks are not shown.`];
   }
 }
 

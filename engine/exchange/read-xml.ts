@@ -41,7 +41,7 @@ export class XmlStream {
     parser.on('error', (error) => this.fault(error.message));
     parser.on('doctype', (text) => {
       this.sinceEvent = 0;
-      if (/<!\s*ENTITY|%/i.test(text)) hostile(ENTITIES);
+      if (/<!\s*ENTITY|\[[^%]*%/i.test(text)) hostile(ENTITIES);
     });
     parser.on('opentagstart', () => {
       this.attributes = 0;

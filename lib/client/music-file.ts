@@ -49,7 +49,7 @@ async function read(name: string, bytes: Uint8Array, signal: AbortSignal | undef
   if (bytes.length > LIMITS.musicBytes) refuse(`This file is too large: ${LIMITS.musicBytes / 1024 / 1024} MB is the limit.`);
   if (!isMusic(bytes)) return bytes.every((byte) => byte <= 32) ? refuse('This file is empty.') : [readText(name, bytes)];
   // The readers of files are fetched where a file is read.
-  const { readMusic } = await import('@/engine/exchange/read-music');
+  const { readMusic } = await import('@/engine/exchange/read-music').catch(() => refuse('What reads files could not be fetched. Check the connection and try again.'));
   const found = (await readMusic(bytes, { pause: turnTaking(), isExpired: () => signal?.aborted ?? false })).filter(({ rhythm }) => rhythm.some(({ rest }) => !rest));
   if (found.length === 0) refuse('This file holds no attack in any part.');
   for (const { rhythm } of found) parseRhythm(formatRhythm(rhythm));

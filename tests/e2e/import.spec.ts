@@ -83,7 +83,7 @@ test('by paste: into its field, and anywhere on the page', async ({ page }) => {
   await panel(page).getByRole('button', { name: 'paste text' }).click();
   await panel(page).getByRole('textbox', { name: 'MusicXML or rhythm text' }).fill('¼, ⅛ (⅛) 1/2');
   await panel(page).getByRole('button', { name: 'Read it' }).click();
-  await expect(panel(page).getByRole('heading', { name: 'What was pasted' })).toBeFocused();
+  await expect(panel(page).getByRole('heading', { name: 'Pasted text' })).toBeFocused();
   await panel(page).getByRole('textbox', { name: 'Name' }).fill('Plank');
   await bring(page);
   await expect(panel(page).getByRole('status')).toContainText('“Plank” is now a subject');
@@ -92,7 +92,7 @@ test('by paste: into its field, and anywhere on the page', async ({ page }) => {
     data.setData('text', text);
     document.body.dispatchEvent(new ClipboardEvent('paste', { clipboardData: data, bubbles: true }));
   }, SCORE);
-  await expect(panel(page).getByRole('status')).toHaveText('What was pasted holds 3 lines.');
+  await expect(panel(page).getByRole('status')).toHaveText('Pasted text holds 3 lines.');
 });
 
 test('by the keyboard alone, 360 px wide', async ({ page }) => {

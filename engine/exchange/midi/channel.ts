@@ -73,6 +73,6 @@ export function channelRhythm(events: readonly MidiEvent[], channel: number, tra
   if (areShort(notes)) odd.note('Every note ends before the next begins, as files of percussion often have it: each can be held to the next attack instead');
   const end = endOf(notes, trackEnd, ticksPerWhole);
   const place = (tick: number) => (tick === 0 ? ZERO : new Fraction(tick, ticksPerWhole));
-  const struck = notes.map((note): Struck => ({ start: place(note.at), end: place(note.end), ...(hasSounds && { sound: Math.min(...note.keys.map((key) => keys.indexOf(key))) + 1 }) }));
+  const struck = notes.map((note): Struck => ({ start: place(note.at), end: place(note.end), ...(hasSounds && { sound: note.keys.reduce((lowest, key) => Math.min(lowest, keys.indexOf(key)), keys.length) + 1 }) }));
   return { rhythm: assembleRhythm(struck, place(end)), end };
 }

@@ -152,6 +152,7 @@ export class PartReader {
       start: this.now, end: this.now.add(length), measure: this.number, isRest: silent, keys: silent ? [] : [keyOf(node)],
       isTiedFromBefore: ties.isFrom, isTiedOn: ties.isOn, ...(silent ? { accent: undefined, roll: false } : marksOf(node, voice.odd, this.number)),
     };
+    if (voice.events.length >= LIMITS.rhythmValues) tooLarge(`A voice of ${this.name} has more than ${LIMITS.rhythmValues} notes and rests, which is the limit. Save the part that is needed as a file of its own.`);
     voice.events.push(event);
     this.move(length);
     this.last = { event, voice };

@@ -15,7 +15,7 @@ function together(events: readonly NoteEvent[], odd: Odd): NoteEvent[] {
       result.push(event);
       continue;
     }
-    last.keys.push(...event.keys);
+    for (const key of event.keys) last.keys.push(key);
     if (event.end.compare(last.end) > 0) last.end = event.end;
     last.isTiedFromBefore &&= event.isTiedFromBefore;
     last.isTiedOn ||= event.isTiedOn;
@@ -116,9 +116,9 @@ export function voiceRhythm(events: readonly NoteEvent[], total: Fraction, decla
   const sound = soundsOf(attacks, declared, odd);
   const struck = attacks.map(({ start, end, accent, roll, keys }): Struck => {
     if (sound === null) return { start, end, accent, roll };
-    const numbers = keys.map(sound);
-    if (new Set(numbers).size > 1) odd.note('Of sounds struck together the lowest was taken');
-    return { start, end, accent, roll, sound: Math.min(...numbers) };
+    const numbers = [...new Set(keys.map(sound))].sort((a, b) => a - b);
+    if (numbers.length > 1) odd.note('Of sounds struck together the lowest was taken');
+    return { start, end, accent, roll, sound: numbers[0]! };
   });
   return assembleRhythm(struck, total);
 }

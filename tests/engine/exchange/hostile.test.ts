@@ -88,6 +88,19 @@ describe('hostile files', () => {
     expect(asked).toBe(11);
   });
 
+  it('chords without end are one attack', async () => {
+    const chord = '<note><chord/><unpitched/><duration>4</duration></note>'.repeat(150_000);
+    const [candidate] = await readMusic(bytesOf(musicXML([`${attributes(1)}${note(4)}${chord}<backup><duration>4</duration></backup>${note(4)}${chord}`])));
+    expect(candidate!.rhythm).toHaveLength(1);
+  });
+
+  it('a file of nothing but oddities is told in a few sentences', async () => {
+    const measures = Array.from({ length: 3_000 }, (_, n) => (n === 0 ? attributes(1_000) : '') + note(n + 1));
+    const [candidate] = await readMusic(bytesOf(musicXML(measures)));
+    expect(candidate!.warnings.length).toBeLessThan(40);
+    expect(candidate!.warnings).toContain('Much else is odd in this file: 2976 more remarks are not shown.');
+  });
+
   it('a compressed score may be held to a smaller limit', async () => {
     await expect(readMusic(mxl(score), { unpackedBytes: 200 })).rejects.toMatchObject({ code: 'too_large' });
     expect(await readMusic(mxl(score), { unpackedBytes: 2_000 })).toHaveLength(1);
