@@ -8,6 +8,7 @@ import { type SystemRows, systemRows } from './system-rows';
 /** A system that has its columns and rows, and waits for a page. */
 export type WaitingSystem = {
   readonly columns: readonly Column[];
+  /** made anew each time: all the notes of a long score, and what is drawn of them, would fill a process's memory */
   readonly made: readonly MadeColumn[];
   readonly widths: readonly number[];
   readonly rows: SystemRows;
@@ -42,9 +43,12 @@ function share(widths: readonly { least: number; natural: number }[], room: numb
  */
 export function layOutSystems(vf: VexFlow, score: PrintScore, room: number, options: { gatherRests: boolean; hideSilent: boolean }): { systems: WaitingSystem[]; tooWide: number[] } {
   const columns = columnsOf(score, options.gatherRests);
-  const made = columns.map((column) => makeColumn(vf, score, column));
-  const inner = columns.map((column, index) => columnWidth(vf, score, column, made[index]!, false));
-  const opening = columns.map((column, index) => columnWidth(vf, score, column, made[index]!, true));
+  const measured = columns.map((column) => {
+    const made = makeColumn(vf, score, column);
+    return { inner: columnWidth(vf, score, column, made, false), opening: columnWidth(vf, score, column, made, true) };
+  });
+  const inner = measured.map((one) => one.inner);
+  const opening = measured.map((one) => one.opening);
   const sums: Record<'least' | 'natural', number[]> = { least: [0], natural: [0] };
   inner.forEach(({ least, natural }, index) => {
     sums.least.push(sums.least[index]! + least);
@@ -67,7 +71,15 @@ export function layOutSystems(vf: VexFlow, score: PrintScore, room: number, opti
     const staves = score.staves.map((_, index) => index);
     const heard = n === 0 || !options.hideSilent ? staves : staves.filter((staff) => !isSilentIn(score, staff, own));
     const widths = share(own.map((_, index) => (index === 0 ? opening[first]! : inner[first + index]!)), room, end === columns.length);
-    return { columns: own, made: made.slice(first, end), widths, rows: systemRows(score, own, heard.length > 0 ? heard : staves.slice(0, 1)) };
+    const rows = systemRows(score, own, heard.length > 0 ? heard : staves.slice(0, 1));
+    return {
+      columns: own,
+      get made() {
+        return own.map((column) => makeColumn(vf, score, column));
+      },
+      widths,
+      rows,
+    };
   });
   const tooWide = starts.filter((first, n) => (starts[n + 1] ?? columns.length) - first === 1 && opening[first]!.least > room).map((first) => score.measures[columns[first]!.measure]!.number);
   return { systems, tooWide };

@@ -273,6 +273,22 @@ describe('a guest’s print', () => {
     expect(rows[0]?.row).not.toContain(token);
   });
 
+  it('that takes long keeps no request waiting: what is asked for behind it is answered with where to wait', async () => {
+    const reader = new Reader();
+    const lines = Array.from({ length: 8 }, (_, n) => ({ instrument: `i${n}`, rhythm: '[1/8 1/8 1/16 1/16 1/8 1/4 (1/4)]x1500' }));
+    const long = { ...smallStudy('Very long'), instruments: lines.map(({ instrument: id }) => ({ id, name: id, family: 'found' })), sections: [{ id: 'a', name: 'A', role: 'other', kind: 'free', lines }] };
+    const { export: before, token = '' } = await order(reader, long);
+    const { id, reader: owner, study } = await own(named('Behind'));
+    const waits = await owner.ask(`/api/studies/${study}/score.pdf`);
+    expect([waits.status, waits.headers.get('retry-after'), waits.headers.get('cache-control')]).toEqual([202, '2', 'no-store']);
+    const item = (waits.body as ExportWire).export;
+    expect([waits.headers.get('location'), item.state]).toEqual([`/api/exports/${item.id}`, 'queued']);
+    await reader.send('DELETE', `/api/exports/${before.id}`, {}, { [EXPORT_TOKEN]: token });
+    expect(await untilOver(owner, item.id)).toMatchObject({ state: 'done', file: { name: 'Behind.pdf' } });
+    expect((await owner.ask(`/api/studies/${study}/score.pdf`)).status).toBe(200);
+    expect((await pool.query('select id from export_jobs where owner_id = $1', [id])).rows).toEqual([{ id: item.id }]);
+  });
+
   it('is the same print where the same is asked for with the token, and another guest’s is not', async () => {
     const reader = new Reader();
     const first = await order(reader, smallStudy('Twice'));

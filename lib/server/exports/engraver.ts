@@ -18,7 +18,7 @@ export class PrintError extends Error {
 /** Where `scripts/lib/build.mjs` has put the program that prints. */
 function program(): string {
   const at = process.env.SESQUI_ENGRAVER;
-  if (!at) throw new Error('SESQUI_ENGRAVER is not set. Start Sesqui with npm start, which sets it.');
+  if (!at) throw new PrintError('internal', 'This server was started without the program that prints. Start it with npm start, which makes it.');
   return at;
 }
 
