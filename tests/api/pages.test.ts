@@ -20,6 +20,13 @@ const EXPECTED: Record<string, readonly Case[]> = {
     { of: 'a demo', at: () => 'lock-gates', statuses: [200, 200, 200, 200, 200, 200, 200] },
     { of: 'nothing', at: () => crypto.randomUUID(), statuses: [200, 200, 200, 200, 200, 200, 200] },
   ],
+  // As the study's own page.
+  '/studies/[id]/print': [
+    { of: 'the owner’s', at: ({ study }) => study.id, statuses: [200, 200, 200, 200, 200, 200, 200] },
+    { of: 'the owner’s, thrown away', at: ({ gone }) => gone.id, statuses: [200, 200, 200, 200, 200, 200, 200] },
+    { of: 'a demo', at: () => 'lock-gates', statuses: [200, 200, 200, 200, 200, 200, 200] },
+    { of: 'nothing', at: () => crypto.randomUUID(), statuses: [200, 200, 200, 200, 200, 200, 200] },
+  ],
   '/proportions': [{ statuses: [200, 200, 200, 200, 200, 200, 200] }],
   '/check': [{ statuses: [200, 200, 200, 200, 200, 200, 200] }],
   '/open-api': [{ statuses: [200, 200, 200, 200, 200, 200, 200] }],
