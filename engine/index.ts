@@ -71,6 +71,7 @@ export { stretchedMetre, type Writing } from './views/writing';
 export { tempoMarkWords, tempoMarks, type TempoMark } from './views/tempo-marks';
 export { compareWritings, legibilityOf, legibilityWords, type Legibility, type WritingChoice } from './views/legibility';
 export { scoreOf, type Score, type Staff } from './views/score';
+export { CLICK, clickEvents, type ClickEvent, type ClickKind, type ClickTrack } from './views/click';
 export { playEvents } from './views/play-events';
 export { endWords, statementEnds, type StatementEnd } from './views/statement-ends';
 export { printScore } from './print/print-score';

@@ -17,6 +17,7 @@ import type { Measure, Picture } from './pictures/svg';
 import { READING_WORDS, threadsPicture } from './pictures/threads-picture';
 import { pageMeasure, toPng } from './pictures/to-png';
 import { type PrintChoices, PrintChoicesFields } from './print-choices';
+import { SoundGroup } from './sound-group';
 import { type Make, useWork, type Work, workWords } from './use-work';
 
 const READINGS: readonly ThreadReading[] = ['in-time', 'from-one-start', 'to-one-end'];
@@ -157,6 +158,9 @@ export function ExportMenu() {
           <Group heading="MIDI">
             <Row name="Standard MIDI File">{word('MIDI', 'MIDI file', written('mid'))}</Row>
             <MidiExactness study={study} />
+          </Group>
+          <Group heading="Sound">
+            <SoundGroup word={word} row={(name, content) => <Row name={name}>{content}</Row>} />
           </Group>
           <Group heading="Pictures">
             <Row name="Form">{pair('Form', formOf)}</Row>

@@ -1,4 +1,4 @@
-import { type BaseContext, Gain, Panner, ToneBufferSource, Volume, WaveShaper } from 'tone';
+import { type BaseContext, Gain, Panner, type ToneAudioNode, ToneBufferSource, Volume, WaveShaper } from 'tone';
 import { PLAYER } from './settings';
 
 /** Nothing leaves louder than half of full scale (−6 dB); up to `CLEAN` it passes unchanged. */
@@ -53,7 +53,7 @@ export class Run {
 
   constructor(
     private readonly context: BaseContext,
-    output: MainOut,
+    output: { readonly input: ToneAudioNode },
     private readonly isAudible: (instrument: string) => boolean,
   ) {
     this.gate = new Gain({ context, gain: 1 });
@@ -72,16 +72,20 @@ export class Run {
     });
   }
 
-  /** Sounds a buffer at a time of the audio clock, exactly; in the past, at once. */
-  sound(buffer: AudioBuffer, instrument: string, time: number, gain: number): void {
+  /**
+   * Sounds a buffer at a time of the audio clock, exactly; in the past, at once.
+   * @param until - where it is stopped short, within `PLAYER.ramp`; it rings on where nothing is said
+   */
+  sound(buffer: AudioBuffer, instrument: string, time: number, gain: number, until?: number): void {
     const channel = this.channels.get(instrument);
     if (!channel) return;
-    const source = new ToneBufferSource({ context: this.context, url: buffer, fadeIn: 0, fadeOut: 0 });
+    const source = new ToneBufferSource({ context: this.context, url: buffer, fadeIn: 0, fadeOut: until === undefined ? 0 : PLAYER.ramp });
     source.connect(channel.gain);
     const entry = { source, time };
     this.sounding.add(entry);
     source.onended = () => this.sounding.delete(entry);
     source.start(Math.max(time, this.context.currentTime), 0, undefined, gain);
+    if (until !== undefined) source.stop(Math.max(until, time));
   }
 
   /** Takes back what was to begin at or after a time. */

@@ -42,6 +42,12 @@ export function strokesOf(events: readonly PlayEvent[], speed = 1): StrokePlan[]
   return strokes.sort((a, b) => a.seconds - b.seconds);
 }
 
+/** When a stroke that falls at a time is stopped short, if its event says so. */
+export function dampedAt({ event, seconds }: StrokePlan, time: number, speed: number): number | undefined {
+  if (event.ends !== 'choke') return undefined;
+  return time + (event.seconds.add(event.lasts).valueOf() - seconds) / speed;
+}
+
 /** What is played: a stretch of the piece, once or over and over. Seconds at the written tempo. */
 export type Passage = {
   readonly from: number;

@@ -2,7 +2,7 @@
 const SLICE = 8;
 
 /** Gives the page its turn; unlike a timer it is not slowed down in a background tab. */
-function breathe(): Promise<void> {
+export function breathe(): Promise<void> {
   return new Promise((resolve) => {
     const { port1, port2 } = new MessageChannel();
     port1.onmessage = () => {

@@ -3,7 +3,7 @@ import type { Instrument } from '@/engine';
 import { type SoundBank, requestFor } from './bank';
 import { outputLatency } from './latency';
 import { type MainOut, Run } from './mixer';
-import { type Anchor, type Passage, type StrokePlan, Timeline } from './schedule';
+import { type Anchor, type Passage, type StrokePlan, Timeline, dampedAt } from './schedule';
 import { PLAYER } from './settings';
 
 /** What is to be played and how fast. */
@@ -105,7 +105,7 @@ export class Transport {
       const buffer = instrument && this.bank.get(requestFor(plan.event, plan.stroke, instrument, context.sampleRate));
       if (!buffer) continue;
       if (time < earliest) missed += 1;
-      else run.sound(buffer, plan.event.instrument, time, plan.gain);
+      else run.sound(buffer, plan.event.instrument, time, plan.gain, dampedAt(plan, time, timeline.speed));
     }
     if (missed > 0) this.hooks.onMissed(missed);
   }
