@@ -139,7 +139,7 @@ export function ExportMenu() {
                 {word('PDF', `Part of ${name} as PDF`, printed('part', id))}
               </Row>
             ))}
-            {study.players.length > 0 && <Row name="All parts">{word('zip of PDFs', 'All parts as zip', printed('parts'))}</Row>}
+            {study.players.length > 0 && <Row name="All parts">{word('zip of PDFs', 'All parts as zip of PDFs', printed('parts'))}</Row>}
             {study.players.length === 0 && <p className="text-[13.5px] text-soft">Name players below, under Instruments, and each has a part.</p>}
             <p className="mt-1">
               <Link href={`/studies/${editor.id}/print`} prefetch={false} className="underline underline-offset-[3px]">

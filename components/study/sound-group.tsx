@@ -42,7 +42,7 @@ export function SoundGroup({ word, row }: { word: (text: string, what: string, m
         <Segments label="Samples a second" value={String(format.rate)} options={[['44100', '44.1 kHz'], ['48000', '48 kHz']]} onChange={(rate) => setFormat({ ...format, rate: rate === '48000' ? 48_000 : 44_100 })} />
       </div>
       {row('All together', word('WAV', 'The sound as WAV', made({ what: 'mix' })))}
-      {row('One for each instrument', word('zip of WAVs', 'Stems as zip', made({ what: 'stems' })))}
+      {row('One for each instrument', word('zip of WAVs', 'Stems as zip of WAVs', made({ what: 'stems' })))}
       {study.players.length > 0 && (
         <>
           <div className="mt-3 mb-1 flex flex-wrap items-center gap-x-4 gap-y-2 text-[13.5px]">
@@ -65,7 +65,7 @@ export function SoundGroup({ word, row }: { word: (text: string, what: string, m
           {study.players.map(({ id, name }) => (
             <span key={id}>{row(`Click for ${name}`, word('WAV', `Click for ${name} as WAV`, made(clicks([id]))))}</span>
           ))}
-          {study.players.length > 1 && row('Clicks for everybody', word('zip of WAVs', 'Clicks as zip', made(clicks(study.players.map(({ id }) => id)))))}
+          {study.players.length > 1 && row('Clicks for everybody', word('zip of WAVs', 'Clicks as zip of WAVs', made(clicks(study.players.map(({ id }) => id)))))}
           <p className="mt-1 text-[13.5px] text-soft">Slow beats are divided; the measure before an entry after a long rest clicks higher.</p>
         </>
       )}

@@ -41,7 +41,7 @@ test('everything in the menu is what it says', async ({ page }) => {
   expect(part.name).toBe('Lock Gates - Player 2.pdf');
   expect((await readPdf(part.bytes)).texts.join(' ')).toContain('Player 2');
 
-  const parts = await take(page, 'All parts as zip');
+  const parts = await take(page, 'All parts as zip of PDFs');
   const files = unzipSync(parts.bytes);
   expect(Object.keys(files).sort()).toEqual(lockGates.players.map(({ name }) => `Lock Gates - ${name}.pdf`));
   for (const { name } of lockGates.players) expect((await readPdf(files[`Lock Gates - ${name}.pdf`]!)).texts.join(' ')).toContain(name);
@@ -173,6 +173,23 @@ test('what cannot be made is said in a sentence', async ({ page, complaints }) =
   await menu(page).getByRole('button', { name: 'Score as PDF' }).click();
   await expect(menu(page).getByRole('alert')).toHaveText('Score as PDF: Sesqui cannot be reached. Check the connection and try again.');
   complaints.splice(0);
+});
+
+test('the open menu has nothing that axe-core finds wrong, light and dark', async ({ browser, complaints }) => {
+  const axe = fs.readFileSync('node_modules/axe-core/axe.min.js', 'utf8');
+  for (const colorScheme of ['light', 'dark'] as const) {
+    // The page's own policy would not let the checker in.
+    const page = await browser.newPage({ colorScheme, bypassCSP: true });
+    await openMenu(page);
+    await page.evaluate(axe);
+    const found = await page.evaluate(async () => {
+      const { axe } = window as unknown as { axe: { run: (at: string) => Promise<{ violations: { id: string; nodes: { html: string }[] }[] }> } };
+      return (await axe.run('[role=dialog]')).violations.map(({ id, nodes }) => [id, nodes[0]?.html]);
+    });
+    expect([colorScheme, found]).toEqual([colorScheme, []]);
+    await page.close();
+  }
+  expect(complaints).toEqual([]);
 });
 
 test('the menu is used by the keyboard alone, and on a narrow screen', async ({ page }) => {
