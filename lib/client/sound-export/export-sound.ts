@@ -4,6 +4,7 @@ import { distinctNames, fileName } from '@/lib/file-names';
 import type { Voice } from '../player/bank';
 import { PLAYER } from '../player/settings';
 import { breathe } from '../player/slices';
+import { BlobSink } from './blob-sink';
 import { inPieces } from './in-pieces';
 import { type RenderJob, type RenderStroke, renderSlices } from './render';
 import { CLICK_CHANNEL, clickStrokes, musicStrokes } from './strokes';
@@ -71,17 +72,17 @@ async function* wavBytes({ strokes }: Layer, job: Job, gain: number, format: Sam
 }
 
 async function blobOf(bytes: AsyncIterable<Uint8Array<ArrayBuffer>>): Promise<Blob> {
-  const parts: Blob[] = [];
-  for await (const piece of bytes) parts.push(new Blob([piece]));
-  return new Blob(parts, { type: 'audio/wav' });
+  const sink = new BlobSink();
+  for await (const piece of bytes) sink.push(piece);
+  return sink.blob('audio/wav');
 }
 
 /** WAV files side by side in a zip, stored as they are: what is made goes to the browser piece by piece. */
 async function zipOf(files: readonly { readonly name: string; readonly bytes: AsyncIterable<Uint8Array<ArrayBuffer>> | readonly Uint8Array<ArrayBuffer>[] }[]): Promise<Blob> {
-  const parts: Blob[] = [];
+  const sink = new BlobSink();
   const zip = new Zip((error, data) => {
     if (error) throw error;
-    parts.push(new Blob([new Uint8Array(data)]));
+    sink.push(new Uint8Array(data));
   });
   for (const { name, bytes } of files) {
     const entry = new ZipPassThrough(name);
@@ -91,7 +92,17 @@ async function zipOf(files: readonly { readonly name: string; readonly bytes: As
     entry.push(new Uint8Array(), true);
   }
   zip.end();
-  return new Blob(parts, { type: 'application/zip' });
+  return sink.blob('application/zip');
+}
+
+/** A browser that has no room for a file takes it without a word, and cannot read it. */
+async function kept(file: SoundFile): Promise<SoundFile> {
+  try {
+    await file.blob.slice(-1).arrayBuffer();
+    return file;
+  } catch {
+    throw new SoundExportError(`The browser has no room to keep ${Math.round(file.blob.size / 1e6)} MB of sound. Choose 16 bits, or take less at a time; a private window keeps less than an ordinary one.`);
+  }
 }
 
 const gainFor = (peak: number): number => (peak > LOUDEST ? LOUDEST / peak : 1);
@@ -121,9 +132,9 @@ export async function exportSound(study: Study, built: BuiltStudy, wish: SoundWi
     for (const layer of loudest) peak = Math.max(peak, await peakOf(layer, job, onFrames, signal));
     const gain = gainFor(peak);
     const files = layers.map((layer, index) => ({ name: names[index]!, bytes: wavBytes(layer, job, gain, format, onFrames, signal) }));
-    if (files.length === 1 && about === null) return { blob: await blobOf(files[0]!.bytes), name: files[0]!.name };
+    if (files.length === 1 && about === null) return kept({ blob: await blobOf(files[0]!.bytes), name: files[0]!.name });
     const words = about === null ? [] : [{ name: 'about.txt', bytes: [new TextEncoder().encode(about(gain))] }];
-    return { blob: await zipOf([...words, ...files]), name: archive };
+    return kept({ blob: await zipOf([...words, ...files]), name: archive });
   };
 
   if (wish.what === 'clicks') {
