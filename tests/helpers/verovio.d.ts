@@ -10,6 +10,7 @@ declare module 'verovio/esm' {
     loadData(data: string): 0 | 1;
     renderToTimemap(options?: Record<string, unknown>): TimemapEntry[];
     getLog(): string;
+    renderToSVG(page: number): string;
     getMEI(options?: Record<string, unknown>): string;
   }
 }
