@@ -91,8 +91,15 @@ export const ATTEMPTS = 3;
 const leaseEnd = sql`now() + make_interval(secs => ${LEASE_SECONDS})`;
 const isLost = and(eq(exportJobs.state, 'running'), sql`${exportJobs.leaseUntil} < now()`);
 
+/** How many the same asker asked for shortly before: everybody's first goes before anybody's second. */
+const placeOfAsker = sql`(
+  select count(*) from ${exportJobs} before
+  where before.created_at < ${exportJobs.createdAt} and before.created_at > ${exportJobs.createdAt} - interval '10 minutes'
+    and coalesce(before.owner_id::text, before.token_hash, '') = coalesce(${exportJobs.ownerId}::text, ${exportJobs.tokenHash}, '')
+)`;
+
 /**
- * Takes the print that has waited longest, or one whose worker has gone. Undefined where nothing waits.
+ * Takes the print that has waited longest, askers in turn, or one whose worker has gone. Undefined where nothing waits.
  * @returns the print with the study that it is made from; `study` is undefined where that version is gone
  */
 export async function takeExport(database: Database, worker: string) {
@@ -100,7 +107,7 @@ export async function takeExport(database: Database, worker: string) {
     .select({ id })
     .from(exportJobs)
     .where(and(or(eq(exportJobs.state, 'queued'), isLost), sql`${exportJobs.attempts} < ${ATTEMPTS}`))
-    .orderBy(exportJobs.createdAt)
+    .orderBy(placeOfAsker, exportJobs.createdAt)
     .limit(1)
     .for('update', { skipLocked: true });
   const [job] = await database

@@ -24,9 +24,13 @@ const guest = (name: string): Asker => ({ userId: null, tokenHash: name });
 const NOBODY: Asker = { userId: null, tokenHash: null };
 const file = { bytes: Buffer.from([0, 1, 255]), type: 'application/pdf', name: 'Weir.pdf' };
 
+let asked = 0;
+/** Asks for a print, a little later each time: moments are kept to the millisecond. */
 async function order(key: string, asker = guest('a'), limits = LIMITS): Promise<string> {
   const answer = await askForExport(db.database, { for: asker, key, options, source: { document: smallStudy(key) } }, limits);
   if (answer.kind !== 'job') throw new Error(answer.whose);
+  asked += 1;
+  if (answer.isNew) await db.pool.query("update export_jobs set created_at = now() - interval '1 minute' + $2 * interval '1 millisecond' where id = $1", [answer.id, asked]);
   return answer.id;
 }
 const worker = () => crypto.randomUUID();
@@ -42,6 +46,20 @@ describe('prints that wait', () => {
     expect(await takeExport(db.database, worker())).toBeUndefined();
     await db.pool.query("update export_jobs set state = 'queued'");
     for (const [n, id] of ids.entries()) expect(await takeExport(db.database, worker())).toMatchObject({ id, study: smallStudy(String(n + 1)), version: null });
+  });
+
+  it('are taken in turn where several readers wait, so that nobody waits for all of another’s', async () => {
+    const [a1, a2, a3] = [await order('1', guest('a')), await order('2', guest('a')), await order('3', guest('a'))];
+    const [b1, b2] = [await order('1', guest('b')), await order('2', guest('b'))];
+    const own = await askForExport(db.database, { for: { userId, tokenHash: null }, key: '1', options, source: { document: smallStudy() } }, LIMITS);
+    const c1 = own.kind === 'job' ? own.id : '';
+    const w = worker();
+    const taken: string[] = [];
+    for (let job = await takeExport(db.database, w); job; job = await takeExport(db.database, w)) {
+      taken.push(job.id);
+      await finishExport(db.database, { id: job.id, worker: w, file, pages: 1 });
+    }
+    expect(taken).toEqual([a1, b1, c1, a2, b2, a3]);
   });
 
   it('are the same where the same is asked for again by the same reader, however often at once', async () => {
