@@ -130,6 +130,8 @@ describe('what is in the files', () => {
     const read = await readPdf(a4.bytes);
     expect(read.texts.join(' ')).toContain('Lock Gates');
     for (const { name } of lockGates.instruments) expect(read.texts.join(' ')).toContain(name);
+    const numbers = new Set(read.texts.join(' ').split(' '));
+    for (const measure of [1, 24, 28, 51, 55]) expect(numbers).toContain(String(measure));
     expect(new Set(read.sizes.map((box) => box.slice(2).map(Math.round).join()))).toEqual(new Set(['595,842']));
     expect(read.texts.at(-1)).toMatch(/Version \d+, \d+ \w+ \d{4}/);
     expect(read.info).toMatchObject({ Title: 'Lock Gates', Producer: 'Sesqui' });
