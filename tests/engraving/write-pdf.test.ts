@@ -35,6 +35,12 @@ describe('a print as PDF', () => {
     expect(info).toMatchObject({ Title: TITLE, Author: 'Iva Towpath', Producer: 'Sesqui', Creator: 'Sesqui' });
   });
 
+  it('says where a character has no face, and composes letters and accents', async () => {
+    const { texts } = await readPdf(await writePdf([page('<text x="40" y="60">水門 weir</text><text x="40" y="90">Cafe\u0301</text>')], { title: TITLE, madeAt: MADE_AT }));
+    expect(texts[0]).toContain('?? weir');
+    expect(texts[0]).toContain('Caf\u00e9');
+  });
+
   it('embeds the music font and the faces of text, as far as they are used', async () => {
     const bytes = Buffer.from(await writePdf(pages(), { title: TITLE, madeAt: MADE_AT })).toString('latin1');
     const names = [...bytes.matchAll(/\/FontName \/[A-Z]{6}\+([\w-]+)/g)].map(([, name]) => name);
@@ -55,12 +61,14 @@ describe('a print as PDF', () => {
 });
 
 describe('the face of each piece of a text', () => {
-  const has = (face: string, codePoint: number) => (face.startsWith('Academico') ? codePoint < 0x400 : face === 'Serif-cyrillic' && codePoint >= 0x400);
+  const has = (face: string, codePoint: number) => (face.startsWith('Academico') ? codePoint < 0x300 : face === 'Serif-cyrillic' && codePoint >= 0x400 && codePoint < 0x500);
   it.each([
     ['Weir', false, [['Academico', 'Weir']]],
     ['Weir', true, [['Academico-Bold', 'Weir']]],
     ['\uE1D5 = 84', false, [['Bravura', '\uE1D5'], ['Academico', ' = 84']]],
     ['a Я b', false, [['Academico', 'a '], ['Serif-cyrillic', 'Я'], ['Academico', ' b']]],
+    ['Cafe\u0301', false, [['Academico', 'Caf\u00e9']]],
+    ['a水b', false, [['Academico', 'a?b']]],
     ['', false, []],
   ] as const)('%j, bold %s', (text, isBold, runs) => {
     expect(fontRuns(text, isBold, has).map((run) => [run.face, run.text])).toEqual(runs);

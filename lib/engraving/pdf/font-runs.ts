@@ -14,12 +14,21 @@ function faceOf(codePoint: number, isBold: boolean, before: string | undefined, 
   return faces.find((face) => has(face, codePoint)) ?? faces[0]!;
 }
 
+/** What stands for a character that no face has: a gap would not be noticed. */
+const UNKNOWN = '?';
+
+/** A letter and its accents as the one character that faces have; musical symbols must not be composed. */
+const composed = (text: string): string => text.replaceAll(/\p{L}\p{M}+/gu, (one) => one.normalize('NFC'));
+
 /** A text in pieces that one face each can draw. */
 export function fontRuns(text: string, isBold: boolean, has: Coverage): { readonly face: string; readonly text: string }[] {
   const runs: { face: string; text: string }[] = [];
-  for (const character of text) {
+  for (const asked of composed(text)) {
     const last = runs.at(-1);
-    const face = faceOf(character.codePointAt(0)!, isBold, last?.face, has);
+    const wanted = faceOf(asked.codePointAt(0)!, isBold, last?.face, has);
+    const isKnown = wanted === MUSIC || /\s/.test(asked) || has(wanted, asked.codePointAt(0)!);
+    const character = isKnown ? asked : UNKNOWN;
+    const face = isKnown ? wanted : faceOf(UNKNOWN.codePointAt(0)!, isBold, last?.face, has);
     if (last?.face === face) last.text += character;
     else runs.push({ face, text: character });
   }
@@ -49,6 +58,7 @@ export function setFaces(svg: Element, has: Coverage): void {
       const runs = fontRuns(node.textContent ?? '', isBold, has);
       if (text.childNodes.length === 1 && runs.length < 2) {
         text.setAttribute('font-family', runs[0]?.face ?? TEXT);
+        node.textContent = runs[0]?.text ?? '';
         continue;
       }
       node.replaceWith(
