@@ -1,5 +1,6 @@
 import type * as Vex from 'vexflow/bravura';
 import type { NotationSymbol, PrintCell, PrintNote } from '@/engine';
+import { CHOKE } from './reach';
 import type { StaffShape } from './shape';
 
 export type VexFlow = typeof Vex;
@@ -31,6 +32,18 @@ export type MadeCell = {
   readonly voice: Vex.Voice;
 };
 
+/** VexFlow 5.0.0 knows nothing shorter than a 128th: it would draw a 256th as a quarter. Flags and rest are SMuFL's (1.4, U+E24A, U+E4EB). */
+function giveSixFlags(vf: VexFlow, note: Vex.StaveNote, rest: boolean): void {
+  if (rest) {
+    Reflect.set(note, 'glyphProps', { ...note.getGlyphProps(), codeHead: '\uE4EB' });
+    for (const head of note.noteHeads) head.setText('\uE4EB');
+    return;
+  }
+  // Its own copy: what VexFlow hands out is shared by all quarters.
+  Reflect.set(note, 'glyphProps', { ...note.getGlyphProps(), beamCount: 6, stemBeamExtension: 30, codeFlagUp: '\uE24A' });
+  note.setStemDirection(vf.Stem.UP);
+}
+
 function makeNote(vf: VexFlow, from: PrintNote, { keys }: StaffShape, isCue: boolean): Vex.StaveNote {
   const { symbol } = from;
   const Note = isCue ? vf.GraceNote : vf.StaveNote;
@@ -40,6 +53,7 @@ function makeNote(vf: VexFlow, from: PrintNote, { keys }: StaffShape, isCue: boo
     dots: symbol.dots,
     stemDirection: vf.Stem.UP,
   });
+  if (symbol.base === '1/256') giveSixFlags(vf, note, symbol.rest);
   for (let dot = 0; dot < symbol.dots; dot += 1) vf.Dot.buildAndAttach([note], { all: true });
   const above = (type: string): void => {
     const articulation = new vf.Articulation(type).setPosition(vf.ModifierPosition.ABOVE);
@@ -80,6 +94,8 @@ function makeTuplets(vf: VexFlow, notes: readonly MadeNote[]): Vex.Tuplet[] {
           bracketed: !isBeamed,
           ratioed: !PLAIN_RATIOS.has(`${mark.actual}:${mark.normal}`),
           location: 1,
+          // VexFlow does not know of the sign over a note that is stopped short.
+          ...(group.some(({ from }) => from.ends === 'choke') ? { yOffset: -CHOKE } : {}),
         }),
       );
     });
@@ -95,7 +111,8 @@ function makeBeams(vf: VexFlow, notes: readonly MadeNote[]): Vex.Beam[] {
     if (first === undefined) continue;
     if (first === 'begin') group = [];
     group.push(one);
-    if (first !== 'end' || group.length < 2) continue;
+    // Of six beams VexFlow draws five: notes so short keep their flags.
+    if (first !== 'end' || group.length < 2 || group.some(({ from }) => from.symbol.base === '1/256')) continue;
     const beam = new vf.Beam(group.map(({ note }) => note));
     beam.renderOptions.flatBeams = true;
     beams.push(beam);

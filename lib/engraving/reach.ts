@@ -12,13 +12,17 @@ const STEM = 36;
 const LEVEL = 9;
 const ACCENT = { accent: 13, strong: 17 } as const;
 const FERMATA = 24;
-const BRACKET = 24;
-const INNER = 17;
-const CHOKE = 20;
+/** A bracket stands so high where nothing stands under it, and a line of ten for each sign under it (VexFlow's tuplets). */
+const BRACKET = 50;
+const BRACKET_TEXT = 20;
+const INNER = 16;
+/** Lines of text that VexFlow counts for a sign. */
+const TEXT_LINES = { accent: 2, strong: 2.5, fermata: 4 } as const;
+export const CHOKE = 20;
 
 /** From the middle line to the top of a note's head or stem. */
-function stemTop({ symbol }: PrintNote, steps: number): number {
-  if (symbol.rest) return 16;
+function stemTop({ symbol, fermata }: PrintNote, steps: number): number {
+  if (symbol.rest) return fermata ? 26 : 18;
   if (symbol.base === '1' || symbol.base === '2') return steps * 5 + 16;
   const levels = Math.max(0, Math.log2(Number(symbol.base.split('/')[1] ?? 1)) - 4);
   return steps * 5 + STEM + levels * LEVEL;
@@ -40,6 +44,15 @@ function tops(notes: readonly PrintNote[], stepsAt: (note: PrintNote) => number)
   return found;
 }
 
+/** The top of the figure over a note in brackets. */
+function bracketTop({ symbol, accent, fermata, ends }: PrintNote, top: number): number {
+  const nesting = symbol.tuplets.length;
+  if (nesting === 0) return 0;
+  const lines = (accent === undefined ? 0 : TEXT_LINES[accent]) + (fermata ? TEXT_LINES.fermata : 0);
+  const overSigns = lines === 0 ? 0 : top + 5 * (lines + 1) + 20;
+  return Math.max(top + 10, BRACKET + 10 * lines, overSigns) + BRACKET_TEXT + (nesting - 1) * INNER + (ends === 'choke' ? CHOKE : 0);
+}
+
 /** How far a measure reaches, everything about its notes counted. */
 export function cellReach({ notes, silent }: PrintCell, sounds: number): Reach {
   const shape = staffShape(sounds);
@@ -48,15 +61,13 @@ export function cellReach({ notes, silent }: PrintCell, sounds: number): Reach {
   if (silent) return { above: FIVE_LINES + (notes.some(({ fermata }) => fermata) ? FERMATA : 0), below: FIVE_LINES };
   let above: number = FIVE_LINES;
   let below = Math.max(FIVE_LINES, lines.below + 4);
-  let nesting = 0;
   const stepsAt = ({ symbol, sound }: PrintNote): number => (symbol.rest ? 0 : stepsOf(shape.keys[Math.min(sound - 1, shape.keys.length - 1)]!));
   const reached = tops(notes, stepsAt);
   notes.forEach((note, index) => {
-    above = Math.max(above, reached[index]! + over(note));
+    above = Math.max(above, reached[index]! + over(note), bracketTop(note, reached[index]!));
     below = Math.max(below, (note.symbol.rest ? 18 : 8) - stepsAt(note) * 5);
-    nesting = Math.max(nesting, note.symbol.tuplets.length);
   });
-  return { above: above + (nesting > 0 ? BRACKET + (nesting - 1) * INNER : 0), below };
+  return { above, below };
 }
 
 /** How many sounds an instrument is drawn with. */

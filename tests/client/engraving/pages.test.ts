@@ -9,6 +9,7 @@ import { layOutPages } from '@/lib/engraving/pages';
 import { textWidth } from '@/lib/engraving/text';
 import { TURN_SECONDS, silenceAbout } from '@/lib/engraving/turns';
 import { type Box, measuresOn, overlaps, rowInk, words } from './geometry';
+import { writtenStudies } from '../../helpers/written-studies';
 import { crowded, large } from './studies';
 
 let vf: VexFlow;
@@ -36,7 +37,11 @@ const cases: [string, StudyInput, string | undefined, PageOptions][] = [...demoS
 
 const said = (box: Box): string => `${box.what} ${[box.left, box.top, box.right, box.bottom].map(Math.round).join(' ')}`;
 
-describe.each(cases)('%s', (_, study, part, options) => {
+const random = writtenStudies(process.env.SESQUI_MANY ? 120 : 24, 6).flatMap((study, n): typeof cases =>
+  [undefined, 'p'].map((part) => [`random ${n + 1}, ${part ?? 'score'}`, study, part, n % 2 === 0 ? PORTRAIT : { paper: 'letter', orientation: 'landscape', staff: 7, stamp: 'version 12' }]),
+);
+
+describe.each([...cases, ...random])('%s', (_, study, part, options) => {
   let made: ReturnType<typeof engrave>;
   beforeAll(() => {
     made = engrave(study, part, options);
@@ -109,6 +114,15 @@ describe('a large score', () => {
     const { layout, score } = engrave(large(30, 100), undefined, { paper: 'a4', orientation: 'portrait', staff: 4 });
     expect(measuresOn(score, layout.pages.flatMap(({ systems }) => systems.map(({ system }) => system)))).toHaveLength(100);
     expect(layout.remarks.length).toBeGreaterThan(0);
+  });
+
+  it('draws a 256th note with six flags and its rest as one, which VexFlow itself does not', () => {
+    const rhythm = '1/256 (1/256) 1/128 1/64 1/32 1/16 1/8 3/4';
+    const { pages } = engrave({ ...crowded, subjects: [], sections: [{ id: 'w', name: 'W', role: 'other', kind: 'free', lines: [{ instrument: 'a', rhythm }] }] }, 'p', PORTRAIT);
+    const glyphs = [...pages[0]!.svg.textContent!].filter((one) => one >= '\uE000');
+    // SMuFL 1.4, “Flags” and “Rests”.
+    expect(glyphs.filter((one) => one === '\uE24A')).toHaveLength(1);
+    expect(glyphs.filter((one) => one === '\uE4EB')).toHaveLength(1);
   });
 
   it('draws cues before entries, small, and the rests before them as one', () => {
