@@ -18,11 +18,14 @@ import {
   setLines,
   setRatio,
 } from '@/lib/client/study-edits';
+import { setLineMarks } from '@/lib/client/print-edits';
 import { Button, TextButton } from '../ui/button';
 import { Token } from '../ui/token';
 import { TryField } from '../ui/try-field';
 import { BeforeControl } from './before-control';
 import { attempt, useStudy } from './context';
+import { DynamicsControl, LineDynamics } from './dynamics-control';
+import { MarksControl } from './marks-control';
 import { ProcessSentence } from './process-sentence';
 import { RhythmField } from './rhythm-field';
 import { WritingControl } from './writing-control';
@@ -73,6 +76,10 @@ function FreeLines({ section }: { section: FreeSection }) {
             instrument={line.instrument}
             onTry={(rhythm) => set(section.lines.map((one, n) => (n === index ? { ...one, rhythm } : one)))}
           />
+          <p className="mt-1 flex flex-wrap gap-x-4 gap-y-1 text-[13.5px] text-soft">
+            <LineDynamics section={section.id} index={index} text={line.dynamics ?? ''} />
+            <MarksControl rhythm={line.rhythm} marks={line.marks} label="How attacks of this line end" set={(marks) => setLineMarks(section.id, index, marks)} />
+          </p>
           {section.lines.length > 1 && (
             <TextButton className="mt-1 text-[13.5px]" onClick={() => setError(set(section.lines.toSpliced(index, 1)))}>
               Take this line away
@@ -149,6 +156,7 @@ function SectionTools({ section }: { section: Section }) {
         </Token>
       )}
       {section.kind !== 'free' && state.built.statements.some((one) => one.section === section.id && !one.factor.equals(1)) && <WritingControl section={section} />}
+      <DynamicsControl section={section} />
       <TextButton disabled={index === 0} onClick={() => setError(attempt(editor, () => moveSection(section.id, -1)))}>
         Move earlier
       </TextButton>

@@ -8,6 +8,7 @@ import { BringInPanel } from '../bring-in/bring-in-panel';
 import { type Selection, StudyContext, type StudyContextValue, subjectOf, useValueNames } from './context';
 import { FormStrip } from './form-strip';
 import { InstrumentsPanel } from './instruments-panel';
+import { PlayersPanel } from './players-panel';
 import { ScorePanel } from './score-panel';
 import { SectionPanel } from './section-panel';
 import { StatementTable } from './statement-table';
@@ -108,6 +109,7 @@ export function StudyEditorView({ editor, status }: { editor: Editor; status: Re
         <ScorePanel onSeek={onSeek} />
         <StatementTable />
         <InstrumentsPanel />
+        <PlayersPanel />
         <p className="sr-only" aria-live="polite">
           {describeSection(state.study, selection.section, { valueNames })}
         </p>

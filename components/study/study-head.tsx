@@ -8,6 +8,7 @@ import { Token } from '../ui/token';
 import { TryField } from '../ui/try-field';
 import { attempt, useStudy, useValueNames } from './context';
 import { ExportMenu } from './export-menu';
+import { TitlePage } from './title-page';
 
 const BEATS = ['1/2', '3/4', '1/4', '3/8', '1/8', '3/16', '1/16'];
 
@@ -86,6 +87,7 @@ export function StudyHead() {
             <b className="font-semibold text-ink">{study.instruments.length}</b> {study.instruments.length === 1 ? 'instrument' : 'instruments'}
           </span>
           {mirrors && <span>{mirrors}</span>}
+          <TitlePage />
         </div>
         <details className="mt-2 max-w-[80ch] text-[14px] text-soft">
           <summary className="w-fit underline decoration-hair underline-offset-[3px]">

@@ -1,8 +1,10 @@
 'use client';
 
 import { attacks, formatFraction, measuresOf, parseRhythm, totalLength } from '@/engine';
+import { setSubjectMarks } from '@/lib/client/print-edits';
 import { setSubject } from '@/lib/client/study-edits';
 import { attempt, useStudy } from './context';
+import { MarksControl } from './marks-control';
 import { RhythmField } from './rhythm-field';
 
 /** The subject of the chosen section, as text and on the staff. */
@@ -32,6 +34,9 @@ export function SubjectPanel() {
       <p className="mt-1 text-[13px] text-soft">
         {`${rhythm.length} values, ${attacks(rhythm).length} attacks, ${formatFraction(length)} whole notes = ${measuresOf(length, study.metre).toFraction(true)} measures of ${study.metre}.`}
         {users.length > 1 && ` Stated in ${users.join(', ')}.`}
+      </p>
+      <p className="mt-1 text-[13.5px] text-soft">
+        <MarksControl rhythm={subject.rhythm} marks={subject.marks} label="How attacks of the subject end" set={(marks) => setSubjectMarks(subject.id, marks)} />
       </p>
     </section>
   );

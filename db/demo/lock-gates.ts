@@ -32,6 +32,7 @@ export const lockGates: StudyInput = {
       subject: 's',
       process: { kind: 'proportion', factors: ['1', '5/4', '3/2', '2'], reading: 'forwards', entries: 'successive' },
       instruments: ['crotales', 'temple-blocks', 'log-drum', 'tam-tam'],
+      statementDynamics: ['mp', 'mp < mf', 'mf', 'mf < f > p'],
       dynamics: 'mf',
     },
     {
@@ -45,9 +46,9 @@ export const lockGates: StudyInput = {
           rhythm:
             '1/8>@1 1/8@2 1/16@3 1/16@3 1/8@2 (1/8) 1/8@4 1/4@3 | 1/8>@1 1/8@3 1/16@4 1/16@4 1/8@2 (1/4) 1/4@1 | 3/16>@2 3/16@3 1/8@4 1/8@1 1/8@2 1/4@3 | 1/8>@4 1/8@3 1/8@2 1/8@1 1/2///@1',
         },
-        { instrument: 'bass-drum', rhythm: '1/4 (3/4) | 1/4 (3/4) | 1/4 (1/4) 1/4 (1/4) | 1/2 1/2///' },
+        { instrument: 'bass-drum', rhythm: '1/4 (3/4) | 1/4 (3/4) | 1/4 (1/4) 1/4 (1/4) | 1/2 1/2///', marks: [{ attack: 0, ends: 'let-ring' }, { attack: 5, ends: 'choke' }] },
       ],
-      dynamics: 'p',
+      dynamics: 'p < mf',
     },
     {
       id: 'pound',
@@ -59,7 +60,7 @@ export const lockGates: StudyInput = {
       instruments: ['wood-block', 'flower-pots', 'frame-drum', 'bass-drum'],
       dynamics: 'f',
     },
-    { id: 'sluice-reversed', name: 'Sluice, reversed', role: 'episode', kind: 'mirror', of: 'sluice', dynamics: 'p' },
-    { id: 'emptying', name: 'Emptying', role: 'recapitulation', kind: 'mirror', of: 'filling', dynamics: 'mp' },
+    { id: 'sluice-reversed', name: 'Sluice, reversed', role: 'episode', kind: 'mirror', of: 'sluice' },
+    { id: 'emptying', name: 'Emptying', role: 'recapitulation', kind: 'mirror', of: 'filling', fermata: true },
   ],
 };

@@ -7,7 +7,7 @@ export const threeFerries: StudyInput = {
   metre: '4/4',
   tempo: { beat: '1/4', perMinute: '96' },
   subjects: [
-    { id: 'crossing', name: 'Crossing', rhythm: '1/4> 1/8 1/8 3/8 1/8 | 1/4 1/4 (1/4) 1/4 | 1/8 1/8 1/4 1/8 3/8 | 1/2> (1/4) 1/4' },
+    { id: 'crossing', name: 'Crossing', rhythm: '1/4> 1/8 1/8 3/8 1/8 | 1/4 1/4 (1/4) 1/4 | 1/8 1/8 1/4 1/8 3/8 | 1/2> (1/4) 1/4', marks: [{ attack: 13, ends: 'let-ring' }] },
     { id: 'wake', name: 'Wake', rhythm: '1/4> 1/12 1/12 1/12 1/8 1/8 1/20 1/20 1/20 1/20 1/20 | 1/6 1/6 1/6 1/4 (1/4)' },
   ],
   instruments: [
@@ -30,6 +30,7 @@ export const threeFerries: StudyInput = {
       subject: 'crossing',
       process: { kind: 'proportion', factors: ['5/2', '2', '3/2'], reading: 'forwards', entries: 'ending-together' },
       instruments: ['brake-drum', 'planks', 'bottles'],
+      dynamics: 'p < f',
     },
     {
       id: 'midstream',
@@ -39,6 +40,8 @@ export const threeFerries: StudyInput = {
       subject: 'wake',
       process: { kind: 'proportion', factors: ['1', '2', '3'], readings: ['forwards', 'backwards-values'], entries: 'successive' },
       instruments: ['planks', 'bottles', 'brake-drum'],
+      statementDynamics: ['mf', 'f > mp', 'mp < ff'],
+      dynamics: 'mf',
       under: [{ instrument: 'congas', rhythm: '[1/8>@1 1/8@2 1/8@2 1/8>@1 1/8@2 1/8@1 1/4@2]x12' }],
     },
     {
@@ -50,7 +53,8 @@ export const threeFerries: StudyInput = {
       process: { kind: 'proportion', factors: ['3/2', '3/4'], reading: 'forwards', entries: 'ending-together' },
       instruments: ['planks', 'bottles'],
       before: [{ kind: 'rotate', steps: 3, by: 'values' }],
+      dynamics: 'pp',
     },
-    { id: 'back', name: 'Three back', role: 'recapitulation', kind: 'mirror', of: 'out', by: 'attacks' },
+    { id: 'back', name: 'Three back', role: 'recapitulation', kind: 'mirror', of: 'out', by: 'attacks', fermata: true },
   ],
 };

@@ -1,16 +1,22 @@
-import { type Study, type ValueNames, clockOf, buildStudy, describeSection, formatClock, tempoWords } from '@/engine';
+import { type FreeSection, type Study, type ValueNames, clockOf, buildStudy, describeSection, formatClock, tempoWords } from '@/engine';
 
 /** Something that differs between two versions of a study, in words. */
 export type Difference = { readonly what: string; readonly mine: string; readonly theirs: string };
 
 const NOTHING = 'not there';
 
+const MARKS = { 'let-ring': 'rings on', choke: 'is stopped short' } as const;
+const marksWords = (marks: Study['subjects'][number]['marks']): string => (marks ?? []).map(({ attack, ends }) => `; attack ${attack + 1} ${MARKS[ends]}`).join('');
+const lineWords = ({ instrument, rhythm, marks, dynamics }: FreeSection['lines'][number]): string => `${instrument}: ${rhythm}${marksWords(marks)}${dynamics ? `; ${dynamics}` : ''}`;
+
 function sectionWords(study: Study, id: string, valueNames: ValueNames): string {
   const section = study.sections.find((one) => one.id === id);
   if (!section) return NOTHING;
-  const lines = section.kind === 'free' ? section.lines.map(({ instrument, rhythm }) => `${instrument}: ${rhythm}`) : [];
-  const under = (section.under ?? []).map(({ instrument, rhythm }) => `Under it, ${instrument}: ${rhythm}`);
-  return [`${section.name}: ${describeSection(study, id, { valueNames })}`, ...lines, ...under].join(' ');
+  const lines = section.kind === 'free' ? section.lines.map(lineWords) : [];
+  const under = (section.under ?? []).map((line) => `Under it, ${lineWords(line)}`);
+  const plans = section.kind === 'process' && section.statementDynamics ? [`Its statements are ${section.statementDynamics.join('; ')}.`] : [];
+  const said = [...(section.dynamics ? [`It is ${section.dynamics}.`] : []), ...plans, ...(section.fermata ? ['Its end is held.'] : [])];
+  return [`${section.name}: ${describeSection(study, id, { valueNames })}`, ...lines, ...under, ...said].join(' ');
 }
 
 function byId<T extends { id: string }>(mine: readonly T[], theirs: readonly T[], what: (item: T) => string, words: (item: T) => string): Difference[] {
@@ -36,9 +42,11 @@ export function differencesOf(mine: Study, theirs: Study, valueNames: ValueNames
   });
   const found = [
     ...simple('Title', ({ title }) => title),
+    ...simple('Composer', ({ composer }) => composer ?? NOTHING),
+    ...simple('Rights', ({ rights }) => rights ?? NOTHING),
     ...simple('Metre', ({ metre }) => metre),
     ...simple('Tempo', ({ tempo }) => tempoWords(tempo, { valueNames })),
-    ...byId(mine.subjects, theirs.subjects, ({ name }) => `Subject “${name}”`, ({ name, rhythm }) => `${name}: ${rhythm}`),
+    ...byId(mine.subjects, theirs.subjects, ({ name }) => `Subject “${name}”`, ({ name, rhythm, marks }) => `${name}: ${rhythm}${marksWords(marks)}`),
     ...sections,
     ...simple('Order of sections', (study) => order(study.sections)),
     ...byId(mine.instruments, theirs.instruments, ({ name }) => `Instrument “${name}”`, ({ name, family, sound, sounds }) => `${name}, ${family}, sounds as ${sound ?? family}, ${sounds ?? 1}`),

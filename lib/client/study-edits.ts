@@ -1,5 +1,6 @@
 import {
   EngineError,
+  type FreeSection,
   type Entries,
   type Instrument,
   LIMITS,
@@ -136,7 +137,7 @@ export const setMirror = (id: string, change: { of?: string; by?: 'values' | 'at
 export const renameSection = (id: string, name: string): Edit => mapSection(id, (section) => ({ ...section, name }));
 export const setRole = (id: string, role: Section['role']): Edit => mapSection(id, (section) => ({ ...section, role }));
 
-export const setLines = (id: string, lines: readonly { instrument: string; rhythm: string }[]): Edit =>
+export const setLines = (id: string, lines: FreeSection['lines']): Edit =>
   mapSection(id, (section) => (section.kind === 'free' ? { ...section, lines: [...lines] } : section));
 
 export const setSubject = (id: string, change: { name?: string; rhythm?: string }): Edit => (study) => ({
