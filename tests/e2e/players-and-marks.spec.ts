@@ -54,8 +54,9 @@ test('players, title page, dynamics, a held end and marks: set in words, seen in
 
 test('by keyboard alone, at 360 px: a player for each instrument, and undone', async ({ page }) => {
   await page.setViewportSize({ width: 360, height: 740 });
-  await page.goto('/studies');
-  await page.getByRole('button', { name: /new study/i }).first().click();
+  await page.goto('/');
+  await page.getByRole('button', { name: 'Start a study' }).first().focus();
+  await page.keyboard.press('Enter');
   const players = page.getByRole('region', { name: 'Players' });
   await expect(players).toContainText('Nobody is named yet');
   await players.getByRole('button', { name: 'Give each instrument its own player' }).focus();
