@@ -1,7 +1,7 @@
 import { randomBytes } from 'node:crypto';
 import fs from 'node:fs';
 import { ensureBuild, nextProgram } from './lib/build.mjs';
-import { ensureChromium } from './lib/debian.mjs';
+import { ensureChromium, tryXmllint } from './lib/debian.mjs';
 import { ensurePackages } from './lib/packages.mjs';
 import { data, inRoot, root } from './lib/paths.mjs';
 import { freePort } from './lib/ports.mjs';
@@ -90,6 +90,7 @@ await main(
     fs.mkdirSync(data, { recursive: true });
     await ensurePackages();
     await ensureChromium();
+    await tryXmllint();
     const { serverUrl, databaseUrl } = await throwAwayDatabase();
     await stage('lint', async () => ofOne((await program('eslint/bin/eslint.js', ['-c', 'tests/eslint.config.mjs', '.', '--max-warnings', '0'])).code));
     await stage('types', types);

@@ -7,6 +7,7 @@ import type { Steps } from '../study/steps-editor';
 import { StepsEditor } from '../study/steps-editor';
 import { Button } from '../ui/button';
 import { Token } from '../ui/token';
+import { useReady } from '../ui/use-ready';
 import { type DrawnRow, type DrawnThread, Rows } from './rows';
 import { TextField } from './text-field';
 import { useHearing } from './use-hearing';
@@ -155,6 +156,7 @@ const isMetre = (text: string): boolean => {
 
 /** A worked transformation, checked: what is wrong first, where, and the habit that avoids it. */
 export function AnswerCheck({ state, set }: { state: CheckState; set: (change: Partial<CheckState>) => void }) {
+  const isReady = useReady();
   const { subject, answer, steps } = state;
   const metre = isMetre(state.metre) ? parseMetre(state.metre).text : '4/4';
   const result = useMemo(() => check(subject, steps, answer, metre), [subject, steps, answer, metre]);
@@ -187,6 +189,7 @@ export function AnswerCheck({ state, set }: { state: CheckState; set: (change: P
         <label className="w-fit text-[14px]">
           Metre{' '}
           <input
+            readOnly={!isReady}
             value={state.metre}
             aria-invalid={!isMetre(state.metre)}
             onChange={(event) => set({ metre: event.target.value })}

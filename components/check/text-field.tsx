@@ -6,6 +6,7 @@ import { tidyRhythm } from '@/lib/client/typed-rhythm';
 import { Marked, faultOf } from '../study/rhythm-fault';
 import { RhythmStaff } from '../study/rhythm-staff';
 import { TextButton } from '../ui/button';
+import { useReady } from '../ui/use-ready';
 import { FromFile } from './from-file';
 import { StaffPad } from './staff-pad';
 
@@ -15,6 +16,7 @@ import { StaffPad } from './staff-pad';
  */
 export function TextField({ label, value, metre, hint, wrong, onChange }: { label: string; value: string; metre: Metre; hint?: string; wrong?: ReadonlySet<number>; onChange: (text: string) => void }) {
   const id = useId();
+  const isReady = useReady();
   const [isOnStaff, setOnStaff] = useState(false);
   const read = tidyRhythm(value);
   const fault = useMemo(() => (read.trim() === '' ? null : faultOf(read)), [read]);
@@ -28,6 +30,7 @@ export function TextField({ label, value, metre, hint, wrong, onChange }: { labe
       <textarea
         id={id}
         value={value}
+        readOnly={!isReady}
         rows={Math.min(5, Math.max(1, Math.ceil(value.length / 90)))}
         spellCheck={false}
         autoComplete="off"

@@ -1,4 +1,5 @@
 import fs from 'node:fs';
+import { inRoot } from './paths.mjs';
 import { run } from './processes.mjs';
 import { Stop } from './stop.mjs';
 
@@ -39,4 +40,15 @@ export const installPostgres = () => install('PostgreSQL', 'postgresql', POSTGRE
 /** Debian's Chromium for the browser tests, installed where it is missing. */
 export async function ensureChromium() {
   if (!fs.existsSync('/usr/bin/chromium')) await install('Chromium', 'chromium', CHROMIUM);
+}
+
+/** xmllint, where the schema that it would check against is here; the tests that ask for it are skipped where it cannot be had. */
+export async function tryXmllint() {
+  if (!fs.existsSync(inRoot('../shared/reference/musicxml-schema')) || fs.existsSync('/usr/bin/xmllint')) return;
+  try {
+    await install('xmllint', 'libxml2-utils', 'apt-get update -q\napt-get install -y -q --no-install-recommends libxml2-utils');
+  } catch (error) {
+    if (!(error instanceof Stop)) throw error;
+    console.log(error.message);
+  }
 }

@@ -8,7 +8,7 @@ import { NAMED_SOUNDS } from '@/lib/client/player/sounds';
 import { openReader, readStaves } from '../helpers/independent-reader';
 import { writtenStudies } from '../helpers/written-studies';
 import { canValidate, standardSounds, validate } from '../helpers/xmllint';
-import { crowded } from '../client/engraving/studies';
+import { crowded } from '../engraving/studies';
 
 /** Sixty in CI, three hundred where somebody asks for them. */
 const MANY = process.env.SESQUI_MANY ? 300 : 60;

@@ -5,7 +5,7 @@ import { drawOnScreen, loadVexFlow } from '../../../components/score/draw';
 import { breakSystems } from '../../../components/score/layout';
 import { type StudyInput, buildStudy, parseStudy, printScore, toMusicXML } from '../../../engine';
 import { layOutPages } from '../../../lib/engraving/pages';
-import { large } from '../../client/engraving/studies';
+import { large } from '../../engraving/studies';
 
 /** Built into one script and run in Chromium: the page's `measureScores`. */
 

@@ -9,7 +9,7 @@ import { layOutPages } from '@/lib/engraving/pages';
 import { textWidth } from '@/lib/engraving/text';
 import { TURN_SECONDS, silenceAbout } from '@/lib/engraving/turns';
 import { type Box, measuresOn, overlaps, rowInk, words } from './geometry';
-import { writtenStudies } from '../../helpers/written-studies';
+import { writtenStudies } from '../helpers/written-studies';
 import { crowded, large } from './studies';
 
 let vf: VexFlow;
