@@ -90,7 +90,8 @@ function drawDynamics(vf: VexFlow, group: Element, score: PrintScore, { columns,
       }
       if (right - left < 8) continue;
       const wide = 5.5;
-      const [a, b] = one.direction === 'louder' ? [isOpenLeft ? wide / 2 : 0, wide] : [wide, isOpenRight ? wide / 2 : 0];
+      // Broken over two systems, it goes on as wide as it was left.
+      const [a, b] = one.direction === 'louder' ? [isOpenLeft ? wide * 0.5 : 0, isOpenRight ? wide * 0.6 : wide] : [isOpenLeft ? wide * 0.5 : wide, isOpenRight ? wide * 0.6 : 0];
       const middleLine = baseline - 5;
       addLine(group, left, middleLine - a, right, middleLine - b);
       addLine(group, left, middleLine + a, right, middleLine + b);
