@@ -33,7 +33,7 @@ function partList(score: PrintScore): string {
  * A study as MusicXML 4.0, part by part: its score, or a player's part with changes of instrument. Everything that is played is
  * written out, repeats too; unpitched notes stand where the drawn score has them. Divisions are the least that make every
  * duration whole, also above 16383, which some MIDI programs take no more of.
- * @param options.part - id of a player
+ * @param options.part - id of a player, or of an instrument that is to have a part of its own
  * @throws EngineError as `buildStudy`; `unknown_player`; `unspellable` where a line cannot be written
  * @see MusicXML 4.0, W3C Music Notation Community Group, 2021
  */

@@ -94,12 +94,18 @@ function staffOf(sources: Sources, id: string, lane: readonly Staff[]): PrintSta
   };
 }
 
+/** An instrument as if somebody played it alone. */
+function playerOf(study: Study, instrument: string): Study['players'][number] | undefined {
+  const own = study.instruments.find(({ id }) => id === instrument);
+  return own === undefined ? undefined : { id: own.id, name: own.name, instruments: [own.id] };
+}
+
 /** Neighbouring staves of one player. */
 function groupsOf(study: Study, staves: readonly PrintStaff[]): PrintGroup[] {
-  const playerOf = (staff: PrintStaff) => study.players.find(({ instruments }) => instruments.includes(staff.instruments[0]!.id));
+  const whose = (staff: PrintStaff) => study.players.find(({ instruments }) => instruments.includes(staff.instruments[0]!.id));
   const groups: PrintGroup[] = [];
   staves.forEach((staff, index) => {
-    const player = playerOf(staff);
+    const player = whose(staff);
     const last = groups.at(-1);
     if (player === undefined) return;
     if (last !== undefined && last.player === player.id && last.first + last.length === index) groups[groups.length - 1] = { ...last, length: last.length + 1 };
@@ -111,13 +117,13 @@ function groupsOf(study: Study, staves: readonly PrintStaff[]): PrintGroup[] {
 /**
  * Everything that is printed of a study: of the whole, one staff an instrument, in the study's order; of a player's part, as few
  * staves as will do, with changes of instrument and cues.
- * @param options.part - id of a player
+ * @param options.part - id of a player, or of an instrument that is to have a part of its own
  * @throws EngineError `unknown_player`
  */
 export function printScore(study: Study, built: BuiltStudy, { part }: { part?: string } = {}): PrintScore {
   const score = scoreOf(study, built);
-  const player = part === undefined ? null : study.players.find(({ id }) => id === part);
-  if (player === undefined) throw new EngineError('unknown_player', `There is no player “${part}” in this study.`);
+  const player = part === undefined ? null : (study.players.find(({ id }) => id === part) ?? playerOf(study, part));
+  if (player === undefined) throw new EngineError('unknown_player', `There is no player and no instrument “${part}” in this study.`);
   const dynamics = dynamicsOf(study, built);
   const repeats = quietRepeats({ score, built, dynamics });
   const sources: Sources = { study, built, score, dynamics, held: heldMeasures(study, built, score) };

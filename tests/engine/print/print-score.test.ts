@@ -55,6 +55,13 @@ describe('what is printed', () => {
     expect([0, 3, 4, 15, 16, 17, 18].map((index) => staves[0]!.cell(index).instrument)).toEqual(['pots', 'pots', 'drum', 'drum', 'drum', 'drum', 'pots']);
   });
 
+  it('gives an instrument a part of its own where it is asked for by name, and refuses what is neither', () => {
+    const { staves, part } = print(two, 'bell');
+    expect(part).toEqual({ id: 'bell', name: 'Bell' });
+    expect(staves.map(({ instruments }) => instruments.map(({ id }) => id))).toEqual([['bell']]);
+    expect(() => print(two, 'nobody')).toThrow(/no player and no instrument/);
+  });
+
   it('cues the entry after a long rest with what sounds before it', () => {
     const [staff] = print(two, 'p').staves;
     expect(staff!.cues.map(({ first, length, instrument }) => ({ first, length, instrument }))).toEqual([{ first: 14, length: 2, instrument: 'bell' }]);
